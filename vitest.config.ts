@@ -1,0 +1,11 @@
+import { defineConfig } from 'vitest/config';
+
+export default defineConfig({
+  test: {
+    include: ['test/**/*.test.ts'],
+    benchmark: { include: ['test/bench/**/*.bench.ts'] },
+    testTimeout: 60_000,
+    // Two cores: the real-thread tests of test/built start threads of their own.
+    maxWorkers: 2,
+  },
+});
