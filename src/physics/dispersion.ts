@@ -148,6 +148,7 @@ function xOverSinhX(x: number): number {
 function firstGuess(omega: number, water: Water): number {
   const { depthM: h, gravityMps2: g } = water;
   const deep = (omega * omega) / g;
+  if (deep === 0) return 0;
   // Eckart 1952: within 6 % of the gravity wavenumber at every depth.
   const gravity = h === Infinity ? deep : deep / Math.sqrt(Math.tanh(deep * h));
   const capillary = Math.cbrt((omega * omega * water.densityKgpm3) / water.surfaceTensionNpm);

@@ -1,5 +1,3 @@
-import type { Water } from '../physics/water.ts';
-
 /** One-sided spectral density S(omega) over intrinsic angular frequency: rad/s in, m^2 s/rad out. */
 export type SpectralDensity = (omega: number) => number;
 
@@ -27,9 +25,4 @@ export interface DirectionalSpreading {
   readonly shape: (theta: number, p: number) => number;
   /** 1 / integral of the shape over the circle. */
   readonly normaliser: (p: number) => number;
-}
-
-/** What a spectrum's parameters may be built from besides its own numbers. */
-export interface SpectrumContext {
-  readonly water: Water;
 }
