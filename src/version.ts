@@ -9,6 +9,6 @@ export const VERSION = '0.1.0';
 export const OUTPUT_VERSION = 1;
 
 /** Printed by the README, the help footer and every manifest. */
-export const CAUTION =
+export const CAUTION: string =
   'Imagery only. Not for navigation, coastal or offshore engineering, or any safety decision: ' +
   'those need licensed practice and local codes.';
