@@ -1,0 +1,74 @@
+import { nyquistWavelengthM } from './cascades.ts';
+import type { Sea, WaveSystemRequest } from './sea.ts';
+import { HEIGHT_PER_DEPTH, metres, peakWavelengthM, STEEP, statedHeightM } from './wave-heights.ts';
+
+/** Share of the Nyquist wavenumber above which bilinear filtering loses a tenth of a cascade's slopes. */
+const LARGEST_HEAD_ROOM = 0.85;
+
+/** Least dimensionless fetch g X / U^2 of the records behind the JONSWAP growth law (from memory). */
+const LEAST_DIMENSIONLESS_FETCH = 10;
+
+/** What is possible but most likely not meant, in plain words. Needs nothing but the sea. */
+export function seaWarnings(sea: Sea): readonly string[] {
+  return [
+    ...sea.systems.flatMap((system) => [...steepnessWarnings(system, sea), ...fetchWarnings(system, sea)]),
+    ...depthWarnings(sea),
+    ...cascadeWarnings(sea),
+    ...foamWarnings(sea),
+  ];
+}
+
+function steepnessWarnings(system: WaveSystemRequest, { water }: Sea): string[] {
+  if (!system.stated) return [];
+  const { significantHeightM: Hs } = system.stated;
+  const wavelength = peakWavelengthM(system.stated, water);
+  if (Hs / wavelength <= STEEP[system.kind]) return [];
+  const limit = Math.round(1 / STEEP[system.kind]);
+  return [
+    `${system.name}: a significant height of ${metres(Hs)} is 1/${(wavelength / Hs).toFixed(1)} of the peak ` +
+      `wavelength of ${metres(wavelength)}; real ${system.kind === 'swell' ? 'swell' : 'wind seas'} ` +
+      `rarely exceed 1/${limit}. Lower it or lengthen the period.`,
+  ];
+}
+
+function fetchWarnings(system: WaveSystemRequest, { water }: Sea): string[] {
+  if (system.kind !== 'wind-sea' || system.growth === null) return [];
+  const { windSpeedMps: U, fetchM: X } = system.growth;
+  const xHat = (water.gravityMps2 * X) / (U * U);
+  if (xHat >= LEAST_DIMENSIONLESS_FETCH) return [];
+  return [
+    `${system.name}: a fetch of ${metres(X)} is too short for a wind of ${Number(U.toPrecision(3))} m/s: ` +
+      `g X / U^2 is ${Number(xHat.toPrecision(2))}, and the growth law was measured above ` +
+      `${LEAST_DIMENSIONLESS_FETCH}. Take at least ${metres((LEAST_DIMENSIONLESS_FETCH * U * U) / water.gravityMps2)}, ` +
+      'or state the height and period.',
+  ];
+}
+
+function depthWarnings({ systems, water }: Sea): string[] {
+  const total = statedHeightM(systems);
+  if (total <= HEIGHT_PER_DEPTH.large * water.depthM) return [];
+  return [
+    `The stated waves have a significant height of ${metres(total)}, more than half the depth of ` +
+      `${metres(water.depthM)}: real waves would be breaking, which linear waves do not show.`,
+  ];
+}
+
+function cascadeWarnings({ cascades }: Sea): string[] {
+  if (cascades.plan === 'auto') return [];
+  return cascades.list.flatMap(({ patchLengthM, resolution, shortestWavelengthM }, i) => {
+    if (shortestWavelengthM === null) return [];
+    const texels = (shortestWavelengthM * resolution) / patchLengthM;
+    if (2 / texels <= LARGEST_HEAD_ROOM) return [];
+    const four = 2 * nyquistWavelengthM(patchLengthM, resolution);
+    return [
+      `c${i}: its shortest wave of ${metres(shortestWavelengthM)} spans only ${texels.toFixed(2)} texels and will ` +
+        `be blurred by filtering; ${metres(four)} would span four.`,
+    ];
+  });
+}
+
+function foamWarnings({ foam, maps }: Sea): string[] {
+  const isAskedFor = foam.target.by === 'coverage' || foam.target.by === 'breaking-level';
+  if (!isAskedFor || maps.some(({ map }) => map === 'foam')) return [];
+  return ['Foam is described but no foam map is written: add `foam: png` to maps, or write `foam: off`.'];
+}

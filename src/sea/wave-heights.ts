@@ -1,0 +1,80 @@
+import { wavenumber } from '../physics/dispersion.ts';
+import type { Water } from '../physics/water.ts';
+import type { Finding } from './findings.ts';
+import type { StatedHeight, WaveSystemRequest } from './sea.ts';
+
+/** Waves break where the height reaches about a seventh of the length. Source: Michell 1893, 0.142 in deep water. */
+export const STEEPEST: number = 1 / 7;
+
+/**
+ * Significant steepness above which we warn. Swell is much flatter, as the steep waves stayed behind in the storm;
+ * the youngest wind sea of the JONSWAP growth law (g X / U^2 = 10) has 1/13. Common practice, no source.
+ */
+export const STEEP: Readonly<Record<WaveSystemRequest['kind'], number>> = Object.freeze({
+  swell: 1 / 20,
+  'wind-sea': 1 / 10,
+});
+
+/**
+ * Largest ratio of height to depth of a single wave over a flat bed (McCowan 1894), and the ratio of significant
+ * height to depth above which breaking would shape the sea (common practice, no source).
+ */
+export const HEIGHT_PER_DEPTH: Readonly<{ largest: number; large: number }> = Object.freeze({
+  largest: 0.78,
+  large: 0.5,
+});
+
+/** Wavelength of the peak in this water, m. */
+export function peakWavelengthM({ peakPeriodS }: StatedHeight, water: Water): number {
+  return (2 * Math.PI) / wavenumber((2 * Math.PI) / peakPeriodS, water);
+}
+
+/** Significant height of all systems whose height is stated, as their energies add up, m. */
+export function statedHeightM(systems: readonly (WaveSystemRequest | null)[]): number {
+  return Math.hypot(...systems.map((system) => system?.stated?.significantHeightM ?? 0));
+}
+
+/** Stated heights that waves of this length cannot have, or that this water is too shallow for. */
+export function heightFindings(systems: readonly (WaveSystemRequest | null)[], water: Water): Finding[] {
+  const findings: Finding[] = [];
+  const highest = HEIGHT_PER_DEPTH.largest * water.depthM;
+  systems.forEach((system, i) => {
+    const stated = system?.stated;
+    if (!stated) return;
+    const path = ['systems', i, 'significantHeight'];
+    const { significantHeightM: Hs } = stated;
+    const wavelength = peakWavelengthM(stated, water);
+    if (Hs / wavelength > STEEPEST) {
+      findings.push({
+        path,
+        expected: `at most ${metres(wavelength * STEEPEST)}, a seventh of the peak wavelength of ${metres(wavelength)}`,
+        found: metres(Hs),
+        remedy: 'Lower the height or lengthen the period: steeper waves break.',
+      });
+    }
+    if (Hs > highest) {
+      findings.push({
+        path,
+        expected: `at most ${metres(highest)}, ${HEIGHT_PER_DEPTH.largest} of the depth`,
+        found: metres(Hs),
+        remedy: 'Lower the height or deepen the water: higher waves break.',
+      });
+    }
+  });
+  const isOneTooHigh = systems.some((system) => (system?.stated?.significantHeightM ?? 0) > highest);
+  const total = statedHeightM(systems);
+  if (total > highest && !isOneTooHigh) {
+    findings.push({
+      path: ['water', 'depth'],
+      expected: `at least ${metres(total / HEIGHT_PER_DEPTH.largest)} for a significant height of ${metres(total)} in all`,
+      found: metres(water.depthM),
+      remedy: 'Deepen the water or lower the waves.',
+    });
+  }
+  return findings;
+}
+
+/** A length to three digits: `2.5 m`. */
+export function metres(lengthM: number): string {
+  return `${Number(lengthM.toPrecision(3))} m`;
+}
