@@ -63,4 +63,35 @@ export interface Image {
 export const LARGEST_CODE = { uint8: 255, uint16: 65535 } as const;
 
 /** Bytes of one stored sample. */
-export const SAMPLE_BYTES = { uint8: 1, uint16: 2, half: 2, float: 4 } as const satisfies Record<SampleType, number>;
+export const SAMPLE_BYTES: Readonly<Record<SampleType, number>> = { uint8: 1, uint16: 2, half: 2, float: 4 };
+
+/** Zeroed samples of one type, `count` of them; the caller's. */
+export function blankPlane(sample: SampleType, count: number): Plane {
+  if (sample === 'uint8') return new Uint8Array(count);
+  return sample === 'float' ? new Float32Array(count) : new Uint16Array(count);
+}
+
+/**
+ * What makes an image inconsistent in itself, as the end of a sentence; null where nothing does.
+ * Whether a file format can hold it is the format's business.
+ */
+export function imageFault(image: Image): string | null {
+  const { width, height, sample, channels, planes } = image;
+  if (!isSide(width) || !isSide(height)) return `its size is ${width} x ${height}`;
+  if (channels.length === 0) return 'it has no channel';
+  if (channels.length !== planes.length)
+    return `it has ${channels.length} channels but ${planes.length} planes`;
+  if (new Set(channels.map(({ name }) => name)).size !== channels.length) return 'two channels share a name';
+  const wanted = blankPlane(sample, 0).constructor;
+  for (const [c, plane] of planes.entries()) {
+    const { name } = channels[c];
+    if (plane.constructor !== wanted) return `channel ${name} is not of type ${sample}`;
+    if (plane.length !== width * height)
+      return `channel ${name} has ${plane.length} samples, not ${width * height}`;
+  }
+  return null;
+}
+
+function isSide(length: number): boolean {
+  return Number.isInteger(length) && length >= 1;
+}
