@@ -1,0 +1,70 @@
+import fc from 'fast-check';
+import type { Water } from '../../src/physics/water.ts';
+import type {
+  SpectrumForm,
+  SpectrumForms,
+  SpreadingForm,
+  SpreadingForms,
+} from '../../src/spectrum/registry.ts';
+
+/** A number between two bounds, both included. */
+export function between(min: number, max: number): fc.Arbitrary<number> {
+  return fc.double({ min, max, noNaN: true });
+}
+
+/** A positive number, even in its logarithm. */
+export function spread(min: number, max: number): fc.Arbitrary<number> {
+  return between(Math.log(min), Math.log(max)).map(Math.exp);
+}
+
+/** Water from a puddle to the deep sea. */
+export const anyWater: fc.Arbitrary<Water> = fc.record({
+  depthM: fc.oneof(spread(0.1, 1e4), fc.constant(Infinity)),
+  gravityMps2: between(1, 25),
+  densityKgpm3: between(990, 1040),
+  surfaceTensionNpm: fc.oneof(fc.constant(0), between(0.02, 0.08)),
+});
+
+const omegaPeakRadPerS = spread(0.2, 20);
+const significantHeightM = between(0, 20);
+const alpha = between(1e-3, 0.05);
+const peakEnhancement = between(1, 10);
+const swellNarrowing = between(0, 1);
+const inverseWaveAge = spread(0.1, 6);
+
+/** Parameters for every registered spectrum: a new form does not compile until it is here, and so meets all laws. */
+export const SPECTRUM_ARBITRARIES: { readonly [F in SpectrumForm]: fc.Arbitrary<SpectrumForms[F]> } = {
+  'pierson-moskowitz': fc.record({
+    form: fc.constant('pierson-moskowitz' as const),
+    windSpeed19p5Mps: between(0.5, 40),
+  }),
+  jonswap: fc.record({ form: fc.constant('jonswap' as const), alpha, omegaPeakRadPerS, peakEnhancement }),
+  tma: fc.record({ form: fc.constant('tma' as const), alpha, omegaPeakRadPerS, peakEnhancement }),
+  bretschneider: fc.record({
+    form: fc.constant('bretschneider' as const),
+    significantHeightM,
+    omegaPeakRadPerS,
+  }),
+};
+
+/** Parameters for every registered spreading. */
+export const SPREADING_ARBITRARIES: { readonly [F in SpreadingForm]: fc.Arbitrary<SpreadingForms[F]> } = {
+  'cos-2s': fc.record({
+    form: fc.constant('cos-2s' as const),
+    s: fc.oneof(fc.constantFrom(0, 1e4), between(0, 100), spread(1e-3, 1e4)),
+    omegaPeakRadPerS,
+    swellNarrowing,
+  }),
+  mitsuyasu: fc.record({
+    form: fc.constant('mitsuyasu' as const),
+    omegaPeakRadPerS,
+    inverseWaveAge,
+    swellNarrowing,
+  }),
+  hasselmann: fc.record({
+    form: fc.constant('hasselmann' as const),
+    omegaPeakRadPerS,
+    inverseWaveAge,
+    swellNarrowing,
+  }),
+};
