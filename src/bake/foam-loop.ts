@@ -1,0 +1,106 @@
+import { advanceFoam, foamSourceTable, shownFoam } from '../maps/foam.ts';
+import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
+import { loopSeconds } from '../sea/loop-length.ts';
+import type { Image } from '../image/image.ts';
+import { encodedMap, type EncodedMap } from '../maps/encoded-map.ts';
+import { decodedChannels } from './cascade-maker.ts';
+
+/** Reads a cascade's J codes of one frame: rows [fromRow, toRow) of the tile, field order. */
+export type CodeReader = (frame: number, fromRow: number, toRow: number) => Uint16Array;
+
+/** d, the factor by which foam fades from frame to frame. */
+export function decayPerFrame(cascade: PlannedCascade, foam: CascadeFoam): number {
+  return Math.exp(-loopSeconds(cascade.loop) / cascade.loop.frameCount / foam.decayTimeS);
+}
+
+/** What is taken out of the written map: the part that one loop does not fade, or nothing. */
+export function removedResidue(plan: Plan, foam: CascadeFoam): number {
+  return plan.foam?.residue === 'remove' ? foam.loopResidue : 0;
+}
+
+/** Source strength by J code for a breaking level given as a code. */
+export function sourceTable(foam: CascadeFoam, breakingCode: number): Float64Array {
+  return foamSourceTable(breakingCode, foam.rampJ / foam.jacobianCodes.stepJ);
+}
+
+/** Codes in which foam is counted: those of the file, or 16-bit ones for float files. */
+export function foamLevels(cascade: PlannedCascade): number {
+  return cascade.maps.find(({ map }) => map === 'foam')?.sample === 'uint8' ? 255 : 65535;
+}
+
+/**
+ * Sum of written foam codes over a loop and a grid of texels, for several breaking levels. Integers, so that any split
+ * of the rows adds up to the same.
+ */
+export function foamSums(
+  plan: Plan,
+  cascade: PlannedCascade,
+  foam: CascadeFoam,
+  grid: { readonly fromRow: number; readonly toRow: number; readonly stride: number },
+  breakingCodes: readonly number[],
+  read: CodeReader,
+): { readonly texels: number; readonly sums: readonly number[] } {
+  const N = cascade.resolution;
+  const { frameCount } = cascade.loop;
+  const d = decayPerFrame(cascade, foam);
+  const residue = removedResidue(plan, foam);
+  const levels = foamLevels(cascade);
+  const perRow = Math.ceil(N / grid.stride);
+  const rows = Math.ceil((grid.toRow - grid.fromRow) / grid.stride);
+  const texels = perRow * rows;
+  // The block's codes of the whole loop, [frame][texel of the grid]: read once, used for every level.
+  const codes = new Uint16Array(frameCount * texels);
+  for (let n = 0, o = 0; n < frameCount; n++) {
+    const block = read(n, grid.fromRow, grid.toRow);
+    for (let row = 0; row < rows; row++) {
+      for (let x = 0; x < N; x += grid.stride) codes[o++] = block[row * grid.stride * N + x];
+    }
+  }
+  const state = new Float64Array(texels);
+  const sums = breakingCodes.map((breakingCode) => {
+    const source = sourceTable(foam, breakingCode);
+    state.fill(0);
+    let sum = 0;
+    for (let n = 0; n < 2 * frameCount; n++) {
+      const at = (n % frameCount) * texels;
+      advanceFoam(state, codes.subarray(at, at + texels), source, d);
+      if (n < frameCount) continue;
+      for (let i = 0; i < texels; i++) sum += Math.round(shownFoam(state[i], residue) * levels);
+    }
+    return sum;
+  });
+  return { texels, sums };
+}
+
+/** Foam images of a run of frames, warmed up by the loop before it. */
+export function* foamImages(
+  plan: Plan,
+  cascade: PlannedCascade,
+  foam: CascadeFoam,
+  run: { readonly fromFrame: number; readonly toFrame: number; readonly breakingCode: number },
+  read: CodeReader,
+): Generator<EncodedMap & { readonly frame: number; readonly image: Image }> {
+  const N = cascade.resolution;
+  const { frameCount } = cascade.loop;
+  const planned = cascade.maps.find(({ map }) => map === 'foam');
+  if (planned === undefined) return;
+  const d = decayPerFrame(cascade, foam);
+  const residue = removedResidue(plan, foam);
+  const source = sourceTable(foam, run.breakingCode);
+  const state = new Float64Array(N * N);
+  const shown = new Float64Array(N * N);
+  for (let n = run.fromFrame - frameCount; n < run.toFrame; n++) {
+    const frame = (n + frameCount) % frameCount;
+    advanceFoam(state, read(frame, 0, N), source, d);
+    if (n < run.fromFrame) continue;
+    for (let i = 0; i < state.length; i++) shown[i] = shownFoam(state[i], residue);
+    const made = encodedMap(new Map([['foam', shown]]), {
+      resolution: N,
+      sample: planned.sample,
+      channels: decodedChannels(planned, undefined),
+      rowZero: plan.output.rowZero,
+      dither: null,
+    });
+    yield { ...made, frame };
+  }
+}

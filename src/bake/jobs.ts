@@ -1,0 +1,108 @@
+import type { MapName } from '../sea/sea.ts';
+import type { ChannelStatistics } from '../maps/encoded-map.ts';
+import type { Decode } from '../image/image.ts';
+
+/** A piece of work that one thread does on its own. Plain and cloneable, as are the results. */
+export type Job = FrameJob | SurveyJob | FoamMeasureJob | FoamJob;
+
+/** All maps but foam of one frame of one cascade, and its Jacobian codes where foam will need them. */
+export interface FrameJob {
+  readonly kind: 'frame';
+  readonly cascade: number;
+  /** Frame of the cascade's loop, from 0. */
+  readonly frame: number;
+  /** Decode rules that a survey found, by map, in channel order. */
+  readonly surveyed: SurveyedRules;
+}
+
+export type SurveyedRules = Readonly<Partial<Record<MapName, readonly Decode[]>>>;
+
+/** Largest magnitudes of one frame's quantities, for the maps whose range is surveyed. */
+export interface SurveyJob {
+  readonly kind: 'survey';
+  readonly cascade: number;
+  readonly frame: number;
+}
+
+/** Sums of the written foam codes over the loop for several breaking levels, on a grid of texels. */
+export interface FoamMeasureJob {
+  readonly kind: 'foam-measure';
+  readonly cascade: number;
+  /** Rows [from, to) of the tile, and the step from texel to texel along both axes. */
+  readonly fromRow: number;
+  readonly toRow: number;
+  readonly stride: number;
+  /** Breaking levels to try, as J codes. */
+  readonly breakingCodes: readonly number[];
+}
+
+/** The foam maps of a run of frames [fromFrame, toFrame) of one cascade. */
+export interface FoamJob {
+  readonly kind: 'foam';
+  readonly cascade: number;
+  readonly fromFrame: number;
+  readonly toFrame: number;
+  readonly breakingCode: number;
+}
+
+/** A file that is in place under its final name. */
+export interface WrittenFile {
+  /** Below the bake folder, with forward slashes. */
+  readonly path: string;
+  readonly bytes: number;
+  readonly sha256: string;
+}
+
+/** One finished frame of one cascade: what a journal line holds. */
+export interface FrameResult {
+  readonly kind: 'frame' | 'foam';
+  readonly cascade: number;
+  readonly frame: number;
+  readonly files: readonly WrittenFile[];
+  /** What was written, by map, in channel order. */
+  readonly statistics: Readonly<Partial<Record<MapName, readonly ChannelStatistics[]>>>;
+  /** Seconds by stage; for `run.json` only. */
+  readonly seconds: StageSeconds;
+}
+
+export type StageSeconds = Readonly<Partial<Record<Stage, number>>>;
+export type Stage = 'synthesis' | 'maps' | 'encode' | 'write' | 'foam';
+
+export interface SurveyResult {
+  readonly kind: 'survey';
+  /** Largest magnitude by map, in channel order, in the channel's unit (of J - 1 for jacobian). */
+  readonly extents: Readonly<Partial<Record<MapName, readonly number[]>>>;
+}
+
+export interface FoamMeasureResult {
+  readonly kind: 'foam-measure';
+  readonly texels: number;
+  /** Sum of written codes over texels and frames for each breaking code: exact integers. */
+  readonly sums: readonly number[];
+}
+
+export type JobResult = readonly FrameResult[] | SurveyResult | FoamMeasureResult;
+
+/** Does jobs; several at a time if it can. */
+export interface Executor {
+  /** How many jobs it can do at once. */
+  readonly width: number;
+  /** @throws LoopswellError naming the cascade and frame where a job fails */
+  run(job: Job): Promise<JobResult>;
+  close(): Promise<void>;
+}
+
+/** `c1 frame 17`, as messages name a job; frames as in file names. */
+export function jobName(job: Job, firstFrame: number): string {
+  const cascade = `c${job.cascade}`;
+  switch (job.kind) {
+    case 'frame':
+      return `${cascade} frame ${job.frame + firstFrame}`;
+    case 'survey':
+      return `${cascade} frame ${job.frame + firstFrame} (range survey)`;
+    case 'foam-measure':
+      return `${cascade} foam level, rows ${job.fromRow} to ${job.toRow - 1}`;
+    case 'foam':
+      return `${cascade} foam of frames ${job.fromFrame + firstFrame} to ${job.toFrame - 1 + firstFrame}`;
+  }
+}
