@@ -26,7 +26,7 @@ export const anyWater: fc.Arbitrary<Water> = fc.record({
 });
 
 const omegaPeakRadPerS = spread(0.2, 20);
-const significantHeightM = between(0, 20);
+const significantHeightM = fc.oneof(fc.constant(0), spread(1e-3, 20));
 const alpha = between(1e-3, 0.05);
 const peakEnhancement = between(1, 10);
 const swellNarrowing = between(0, 1);
