@@ -172,6 +172,22 @@ export function jacobianDecode(compressionDeviation: number): Decode {
   return spanDecode(1 - JACOBIAN_RANGE_SIGMAS.below * sigma, 1 + JACOBIAN_RANGE_SIGMAS.above * sigma);
 }
 
+/**
+ * Decode rule of a channel whose largest magnitude a survey of the loop has found.
+ *
+ * @param extent largest magnitude in the channel's unit; of J - 1 for a Jacobian
+ */
+export function surveyedDecode(
+  quantity: Quantity,
+  sample: 'uint8' | 'uint16',
+  extent: number,
+  output: OutputConventions,
+): Decode {
+  if (quantity === 'jacobian') return spanDecode(1 - extent, 1 + extent);
+  const northward = quantity === 'displacement-north' || quantity === 'velocity-north';
+  return centredDecode(extent, sample, northward && output.axes === 'y-up' ? -1 : 1);
+}
+
 function spanDecode(low: number, high: number): Decode {
   return { scale: high - low, offset: low };
 }

@@ -1,0 +1,9 @@
+/** The only clock of the library: durations for `run.json` and the date of a run. Nothing a file holds depends on it. */
+export function secondsNow(): number {
+  return performance.now() / 1000;
+}
+
+/** Date and time of day, ISO 8601, UTC. */
+export function dateNow(): string {
+  return new Date().toISOString();
+}

@@ -1,0 +1,40 @@
+import { UnavailableError } from '../errors.ts';
+import type { Plan } from '../plan/plan.ts';
+import { freeBytes } from '../store/bake-folder.ts';
+import { machineMemoryBytes } from './machine.ts';
+
+/** A runtime's own memory for the main thread and for each worker, bytes; measured, see DEVELOPERS.md. */
+const MAIN_THREAD_BYTES = 90e6;
+const WORKER_BYTES = 30e6;
+
+/** Memory a bake is expected to take at its peak, bytes. */
+export function expectedMemoryBytes({ report: { cost } }: Plan, threads: number): number {
+  return MAIN_THREAD_BYTES + cost.sharedBytes + threads * (WORKER_BYTES + cost.bytesPerThread);
+}
+
+/**
+ * Refuses a bake that this machine cannot hold, before anything is written.
+ *
+ * @param present bytes of the bake that are on the disk already
+ * @throws UnavailableError with the figures
+ */
+export function requireResources(plan: Plan, folder: string, threads: number, present: number): void {
+  const memory = expectedMemoryBytes(plan, threads);
+  if (memory > machineMemoryBytes()) {
+    throw new UnavailableError(
+      `The bake needs about ${gigabytes(memory)} of memory with ${threads} threads; this machine has ${gigabytes(machineMemoryBytes())}. Use fewer threads or a lower resolution.`,
+    );
+  }
+  const { outputBytes, scratchBytes } = plan.report.cost;
+  const disk = outputBytes + scratchBytes - present;
+  const free = freeBytes(folder);
+  if (disk > free) {
+    throw new UnavailableError(
+      `The bake needs about ${gigabytes(disk)} of disk (${gigabytes(scratchBytes)} of it only while it runs); ${folder} has ${gigabytes(free)} free. Free some or choose another folder.`,
+    );
+  }
+}
+
+function gigabytes(bytes: number): string {
+  return bytes < 1e9 ? `${(bytes / 1e6).toFixed(0)} MB` : `${(bytes / 1e9).toFixed(1)} GB`;
+}
