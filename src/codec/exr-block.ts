@@ -84,7 +84,7 @@ function plainBytes(words: Uint16Array): Uint8Array {
 }
 
 /** Bytes of a block before compression. */
-export function blockByteLength(planes: readonly Plane[], width: number, lines: number): number {
+function blockByteLength(planes: readonly Plane[], width: number, lines: number): number {
   return 2 * lines * width * planes.length * wordsPerSample(planes[0]);
 }
 

@@ -25,7 +25,7 @@ export function ownAttributes(
 }
 
 /** How to read one channel, for a person: `displacement-up in m = code / 65535 * 12 - 6`. */
-export function readingRule(channel: ChannelSpec, sample: SampleType): string {
+function readingRule(channel: ChannelSpec, sample: SampleType): string {
   const { quantity, unit, decode } = channel;
   const stored = sample === 'uint8' || sample === 'uint16' ? `code / ${LARGEST_CODE[sample]}` : 'stored';
   const unitWords = unit === '1' ? '' : ` in ${unit}`;
