@@ -1,6 +1,6 @@
 import { codecFor } from '../codec/registry.ts';
-import type { FieldName, FrameFields } from '../field/frame-fields.ts';
 import { float64Engine } from '../field/float64-engine.ts';
+import type { FieldName, FrameFields } from '../field/frame-fields.ts';
 import { type Synthesis, synthesis } from '../field/synthesis.ts';
 import type { ChannelSpec, Decode, Image } from '../image/image.ts';
 import { type ChannelStatistics, ditherPattern, encodedMap } from '../maps/encoded-map.ts';
@@ -97,7 +97,10 @@ export function decodedChannels(
   surveyed: readonly Decode[] | undefined,
 ): readonly ChannelSpec[] {
   if (isSurveyed(planned)) return planned.channels;
-  return planned.channels.map((channel, c) => ({ ...channel, decode: channel.decode ?? (surveyed as Decode[])[c] }));
+  return planned.channels.map((channel, c) => ({
+    ...channel,
+    decode: channel.decode ?? (surveyed as Decode[])[c],
+  }));
 }
 
 /** The file of one map of one frame: its path below the bake folder and its bytes. */
@@ -126,5 +129,7 @@ export function encodedFile(
 
 /** A printf pattern's path for one frame number, e.g. `c0/foam.%04d.png` and 7: `c0/foam.0007.png`. */
 export function framePath(pattern: string, frameNumber: number): string {
-  return pattern.replace(/%0(\d+)d/, (_, digits: string) => String(frameNumber).padStart(Number(digits), '0'));
+  return pattern.replace(/%0(\d+)d/, (_, digits: string) =>
+    String(frameNumber).padStart(Number(digits), '0'),
+  );
 }

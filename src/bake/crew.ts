@@ -1,6 +1,6 @@
+import pLimit from 'p-limit';
 import { StoppedError } from '../errors.ts';
 import type { Plan } from '../plan/plan.ts';
-import pLimit from 'p-limit';
 import type { FinishedWork } from './finished-work.ts';
 import type { Executor, FrameResult, Job } from './jobs.ts';
 import type { BakeStage } from './options.ts';
@@ -50,6 +50,8 @@ export async function runJobs<R>(
 /** @throws StoppedError if the bake was told to stop */
 export function throwIfStopped({ signal, folder }: Pick<Crew, 'signal' | 'folder'>): void {
   if (signal?.aborted === true) {
-    throw new StoppedError(`Stopped early; what is finished is kept in ${folder}. Run the same command again to resume.`);
+    throw new StoppedError(
+      `Stopped early; what is finished is kept in ${folder}. Run the same command again to resume.`,
+    );
   }
 }

@@ -20,7 +20,8 @@ export function finishedWork(folder: string, journalled: readonly JournalEntry[]
   const done = new Map<string, JournalEntry>();
   const key = (kind: string, cascade: number, frame: number): string => `${kind} ${cascade} ${frame}`;
   for (const entry of journalled) {
-    if (entry.files.every((file) => isIntact(folder, file))) done.set(key(entry.kind, entry.cascade, entry.frame), entry);
+    if (entry.files.every((file) => isIntact(folder, file)))
+      done.set(key(entry.kind, entry.cascade, entry.frame), entry);
   }
   return {
     has: (kind, cascade, frame) => done.has(key(kind, cascade, frame)),

@@ -1,5 +1,5 @@
-import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
 import { HIGHEST_BREAKING_J } from '../plan/foam-plan.ts';
+import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
 import { foamLevels } from './foam-loop.ts';
 import type { Executor, FoamMeasureResult } from './jobs.ts';
 

@@ -1,8 +1,8 @@
+import type { Image } from '../image/image.ts';
+import { type EncodedMap, encodedMap } from '../maps/encoded-map.ts';
 import { advanceFoam, foamSourceTable, shownFoam } from '../maps/foam.ts';
 import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
 import { loopSeconds } from '../sea/loop-length.ts';
-import type { Image } from '../image/image.ts';
-import { encodedMap, type EncodedMap } from '../maps/encoded-map.ts';
 import { decodedChannels } from './cascade-maker.ts';
 
 /** Reads a cascade's J codes of one frame: rows [fromRow, toRow) of the tile, field order. */

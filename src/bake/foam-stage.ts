@@ -14,15 +14,20 @@ export async function makeFoam(crew: Crew): Promise<readonly (FoamLevel | null)[
   const onRound = (): void => crew.report('foam-level', ++rounds, Math.max(rounds, 10 * foaming));
   const levels = await Promise.all(
     crew.plan.cascades.map(({ foam }, c) =>
-      foam === null ? null : foamLevel(crew.plan, c, crew.executor, () => {
-        throwIfStopped(crew);
-        onRound();
-      }),
+      foam === null
+        ? null
+        : foamLevel(crew.plan, c, crew.executor, () => {
+            throwIfStopped(crew);
+            onRound();
+          }),
     ),
   );
 
   const jobs = levels.flatMap((level, c) => (level === null ? [] : foamJobs(crew, c, level.breakingCode)));
-  const total = crew.plan.cascades.reduce((sum, { foam, loop }) => sum + (foam === null ? 0 : loop.frameCount), 0);
+  const total = crew.plan.cascades.reduce(
+    (sum, { foam, loop }) => sum + (foam === null ? 0 : loop.frameCount),
+    0,
+  );
   let done = total - jobs.reduce((sum, { fromFrame, toFrame }) => sum + toFrame - fromFrame, 0);
   await runJobs<readonly FrameResult[]>(crew, jobs, (results) => {
     crew.keep(results);
@@ -36,7 +41,11 @@ export async function makeFoam(crew: Crew): Promise<readonly (FoamLevel | null)[
  * Runs of frames that still lack foam, one a thread where possible. Each run is warmed up by a loop of its own, which
  * costs about a fifth of making the frames, so few long runs are best.
  */
-function foamJobs({ plan, executor, finished }: Crew, cascade: number, breakingCode: number): readonly FoamJob[] {
+function foamJobs(
+  { plan, executor, finished }: Crew,
+  cascade: number,
+  breakingCode: number,
+): readonly FoamJob[] {
   const { frameCount } = plan.cascades[cascade].loop;
   const length = Math.ceil(frameCount / executor.width);
   const jobs: FoamJob[] = [];

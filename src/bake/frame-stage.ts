@@ -27,7 +27,11 @@ export async function makeFrames(
 }
 
 /** All frame jobs of a plan, the frames of all cascades side by side. */
-function frameJobs(plan: Plan, rules: readonly SurveyedRules[], range: FrameRange | null): readonly FrameJob[] {
+function frameJobs(
+  plan: Plan,
+  rules: readonly SurveyedRules[],
+  range: FrameRange | null,
+): readonly FrameJob[] {
   const { firstFrame } = plan.loop;
   const jobs = plan.cascades.flatMap(({ loop }, cascade) =>
     Array.from({ length: loop.frameCount }, (_, frame): FrameJob => {
@@ -35,7 +39,10 @@ function frameJobs(plan: Plan, rules: readonly SurveyedRules[], range: FrameRang
     }),
   );
   return jobs
-    .filter(({ frame }) => range === null || (frame + firstFrame >= range.first && frame + firstFrame <= range.last))
+    .filter(
+      ({ frame }) =>
+        range === null || (frame + firstFrame >= range.first && frame + firstFrame <= range.last),
+    )
     .sort((a, b) => a.frame - b.frame);
 }
 

@@ -1,6 +1,5 @@
 import { InternalError } from '../errors.ts';
 import type { Decode } from '../image/image.ts';
-import type { ChannelStatistics } from '../maps/encoded-map.ts';
 import type {
   Manifest,
   ManifestCascade,
@@ -11,9 +10,10 @@ import type {
   ManifestSystem,
 } from '../manifest/manifest.ts';
 import { readingGuide } from '../manifest/reading.ts';
+import type { ChannelStatistics } from '../maps/encoded-map.ts';
 import type { Plan, PlannedCascade, PlannedMap, PlannedSystem } from '../plan/plan.ts';
-import type { Loop, MapName } from '../sea/sea.ts';
 import { loopSeconds } from '../sea/loop-length.ts';
+import type { Loop, MapName } from '../sea/sea.ts';
 import { CAUTION } from '../version.ts';
 import { bandLimits } from '../waves/band.ts';
 import { nyquistWavenumber, wavenumberStep } from '../waves/lattice.ts';
@@ -96,7 +96,9 @@ function requireWhole(cascade: PlannedCascade, entries: readonly JournalEntry[])
   const count = (kind: JournalEntry['kind']): number => entries.filter((entry) => entry.kind === kind).length;
   const { frameCount } = cascade.loop;
   if (count('frame') !== frameCount || (cascade.foam !== null && count('foam') !== frameCount)) {
-    throw new InternalError(`${cascade.id} has ${count('frame')} frames and ${count('foam')} of foam, not ${frameCount}`);
+    throw new InternalError(
+      `${cascade.id} has ${count('frame')} frames and ${count('foam')} of foam, not ${frameCount}`,
+    );
   }
 }
 
@@ -150,7 +152,8 @@ function manifestCascade(
   rules: SurveyedRules,
 ): ManifestCascade {
   const maps: Partial<Record<MapName, ManifestMap>> = {};
-  for (const planned of cascade.maps) maps[planned.map] = manifestMap(cascade, planned, entries, rules[planned.map]);
+  for (const planned of cascade.maps)
+    maps[planned.map] = manifestMap(cascade, planned, entries, rules[planned.map]);
   const { kMinRadPerM, kMaxRadPerM } = bandLimits(cascade.band);
   const variance = measuredVariance({ maps });
   return {

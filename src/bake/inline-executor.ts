@@ -14,7 +14,8 @@ export function inlineExecutor(plan: Plan, waves: readonly WaveAmplitudes[], fol
         return runJob(job);
       } catch (error) {
         const text = `${jobName(job, plan.loop.firstFrame)}: ${(error as Error).message}`;
-        if (error instanceof LoopswellError) throw new LoopswellError(text, error.exitStatus, { cause: error });
+        if (error instanceof LoopswellError)
+          throw new LoopswellError(text, error.exitStatus, { cause: error });
         throw new InternalError(text, { cause: error });
       }
     },

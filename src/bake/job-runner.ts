@@ -1,7 +1,7 @@
 import { sha256 } from '../hash.ts';
 import type { ChannelStatistics } from '../maps/encoded-map.ts';
-import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
 import { isSurveyed } from '../plan/encodings.ts';
+import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
 import type { MapName } from '../sea/sea.ts';
 import { writeFileAtomic } from '../store/atomic-file.ts';
 import { fillFromFiles } from '../store/scratch.ts';
@@ -112,7 +112,14 @@ function foamResults(job: FoamJob, plan: Plan, folder: string): readonly FrameRe
     const files = [written(folder, path, bytes)];
     timer.lap('write');
     const { seconds } = timer;
-    results.push({ kind: 'foam', cascade: job.cascade, frame, files, statistics: { foam: statistics }, seconds });
+    results.push({
+      kind: 'foam',
+      cascade: job.cascade,
+      frame,
+      files,
+      statistics: { foam: statistics },
+      seconds,
+    });
     timer = stageTimer();
   }
   return results;

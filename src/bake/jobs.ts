@@ -1,6 +1,6 @@
-import type { MapName } from '../sea/sea.ts';
-import type { ChannelStatistics } from '../maps/encoded-map.ts';
 import type { Decode } from '../image/image.ts';
+import type { ChannelStatistics } from '../maps/encoded-map.ts';
+import type { MapName } from '../sea/sea.ts';
 
 /** A piece of work that one thread does on its own. Plain and cloneable, as are the results. */
 export type Job = FrameJob | SurveyJob | FoamMeasureJob | FoamJob;

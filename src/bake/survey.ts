@@ -1,8 +1,8 @@
 import { isInteger, isSurveyed, surveyedDecode } from '../plan/encodings.ts';
 import type { Plan, PlannedCascade } from '../plan/plan.ts';
+import type { MapName } from '../sea/sea.ts';
 import { type Crew, runJobs } from './crew.ts';
 import type { SurveyedRules, SurveyJob, SurveyResult } from './jobs.ts';
-import type { MapName } from '../sea/sea.ts';
 
 /**
  * Finds the ranges that the plan left to a survey: the largest magnitude of each channel over the whole loop, so that
@@ -15,7 +15,11 @@ export async function surveyedRules(crew: Crew): Promise<readonly SurveyedRules[
   const largest = plan.cascades.map((): Partial<Record<MapName, number[]>> => ({}));
   const jobs = plan.cascades.flatMap((cascade, c): SurveyJob[] => {
     if (cascade.maps.every(isSurveyed)) return [];
-    return Array.from({ length: cascade.loop.frameCount }, (_, frame) => ({ kind: 'survey', cascade: c, frame }));
+    return Array.from({ length: cascade.loop.frameCount }, (_, frame) => ({
+      kind: 'survey',
+      cascade: c,
+      frame,
+    }));
   });
   let done = 0;
   await runJobs<SurveyResult>(crew, jobs, ({ extents }, { cascade }) => {
@@ -37,7 +41,9 @@ function rulesOf(
     const { map, sample, channels } = planned;
     const found = extents[map];
     if (found === undefined || !isInteger(sample)) return [];
-    return [[map, channels.map(({ quantity }, c) => surveyedDecode(quantity, sample, found[c], plan.output))]];
+    return [
+      [map, channels.map(({ quantity }, c) => surveyedDecode(quantity, sample, found[c], plan.output))],
+    ];
   });
   return Object.fromEntries(rules);
 }

@@ -1,5 +1,5 @@
 import { Worker } from 'node:worker_threads';
-import { InternalError, LoopswellError, type ExitStatus } from '../errors.ts';
+import { type ExitStatus, InternalError, LoopswellError } from '../errors.ts';
 import type { Plan } from '../plan/plan.ts';
 import type { WaveAmplitudes } from '../waves/wave-amplitudes.ts';
 import { type Executor, type Job, type JobResult, jobName } from './jobs.ts';

@@ -1,8 +1,8 @@
 import { CannotCreateError, InputError } from '../errors.ts';
-import { parseManifest } from '../manifest/manifest-text.ts';
 import type { Manifest } from '../manifest/manifest.ts';
-import { planText } from '../plan/plan-text.ts';
+import { parseManifest } from '../manifest/manifest-text.ts';
 import type { Plan } from '../plan/plan.ts';
+import { planText } from '../plan/plan-text.ts';
 import { writeFileAtomic } from '../store/atomic-file.ts';
 import { fileBytes, filesIn, hasFile, removeFiles } from '../store/bake-folder.ts';
 import { readJournals } from '../store/journal.ts';

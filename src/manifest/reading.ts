@@ -1,13 +1,17 @@
 import type { OutputConventions } from '../sea/sea.ts';
 
 /** The reader's guide that travels with the files: short sentences and formulas, by topic. */
-export function readingGuide(output: OutputConventions, names: ReadonlySet<string>): Readonly<Record<string, string>> {
+export function readingGuide(
+  output: OutputConventions,
+  names: ReadonlySet<string>,
+): Readonly<Record<string, string>> {
   const rowZero =
     output.rowZero === 'north'
       ? 'Row 0 of a file is the north edge; tools that count v down from the upper left corner use v = 1 - north / patchLength.'
       : 'Row 0 of a file is the south edge; tools that count v down from the upper left corner use v = north / patchLength.';
   const guide: Record<string, string> = {
-    decode: 'value = stored * scale + offset; stored is the float in the file, or code / largest code (0..1).',
+    decode:
+      'value = stored * scale + offset; stored is the float in the file, or code / largest code (0..1).',
     coordinates: `World: x east, y north, z up, right-handed. uv = (east, north) / patchLengthM of each cascade, repeated; samples sit at texel centres, so no half-texel shift. ${rowZero}`,
     color: 'Every file holds data: no colour transform, no gamma, no sRGB flag.',
     loop: 'Frame numbers run from firstFrame; the frame after the last is the first. A cascade with a shorter loop repeats within the whole.',

@@ -3,8 +3,15 @@ import { MAP_NAMES } from '../sea/sea.ts';
 import type { Manifest } from './manifest.ts';
 
 const number = z.number();
-const share = z.number().min(-1e-9).max(1 + 1e-9);
-const count = z.number().int().positive().max(2 ** 31);
+const share = z
+  .number()
+  .min(-1e-9)
+  .max(1 + 1e-9);
+const count = z
+  .number()
+  .int()
+  .positive()
+  .max(2 ** 31);
 const frameRate = z.tuple([count, count]).readonly();
 const hash = z.string().regex(/^sha256:[0-9a-f]{64}$/);
 
