@@ -1,0 +1,110 @@
+import sharp from 'sharp';
+import type { DecodedImage } from '../codec/codec.ts';
+import { codecFor } from '../codec/registry.ts';
+import { LARGEST_CODE } from '../image/image.ts';
+import type { Manifest, ManifestCascade, ManifestChannel, ManifestMap } from '../manifest/manifest.ts';
+import { numberFromHalf } from '../math/half.ts';
+
+/** One file of a bake, for whoever draws it; the sheet itself reads no disk. */
+export type FrameBytes = (path: string) => Uint8Array;
+
+export interface ContactSheetOptions {
+  /** Side of one picture, pixels. */
+  readonly cell?: number;
+  /** How many frames to show of each map, spread over the loop. */
+  readonly frames?: number;
+}
+
+export const CONTACT_SHEET_DEFAULTS: Readonly<Required<ContactSheetOptions>> = Object.freeze({
+  cell: 192,
+  frames: 3,
+});
+
+const GAP = 8;
+const BACKGROUND = { r: 24, g: 27, b: 31 };
+
+/**
+ * A picture of a bake for people: a row for each cascade, for each of its maps a few frames side by side. Lengths,
+ * speeds, slopes and strains are grey around zero with one scale for all frames of a channel; their last channel (up,
+ * where there is one) is shown. Normals are shown as stored, foam and J as grey.
+ *
+ * @returns bytes of a PNG
+ */
+export async function contactSheet(
+  manifest: Manifest,
+  read: FrameBytes,
+  options: ContactSheetOptions = {},
+): Promise<Uint8Array> {
+  const { cell, frames } = { ...CONTACT_SHEET_DEFAULTS, ...options };
+  const pictures: { input: Buffer; left: number; top: number }[] = [];
+  let width = 0;
+  for (const [row, cascade] of manifest.cascades.entries()) {
+    let left = GAP;
+    const top = GAP + row * (cell + GAP);
+    for (const map of Object.values(cascade.maps)) {
+      for (const path of sampledPaths(cascade, map, frames)) {
+        const image = codecFor(map.format).decode(read(path), path);
+        const pixels = visiblePixels(image, map);
+        const input = await sharp(pixels, { raw: { width: image.width, height: image.height, channels: 3 } })
+          .resize(cell, cell, { kernel: 'lanczos3' })
+          .png()
+          .toBuffer();
+        pictures.push({ input, left, top });
+        left += cell + 1;
+      }
+      left += GAP;
+    }
+    width = Math.max(width, left);
+  }
+  const height = GAP + manifest.cascades.length * (cell + GAP);
+  const sheet = sharp({ create: { width, height, channels: 3, background: BACKGROUND } });
+  return new Uint8Array(await sheet.composite(pictures).png({ compressionLevel: 9 }).toBuffer());
+}
+
+/** Paths of a map's frames spread evenly over its loop. */
+function sampledPaths(cascade: ManifestCascade, map: ManifestMap, frames: number): readonly string[] {
+  const { firstFrame, frameCount } = cascade.loop;
+  const count = Math.min(frames, frameCount);
+  return Array.from({ length: count }, (_, i) => {
+    const frameNumber = firstFrame + Math.floor((i * frameCount) / count);
+    return map.pattern.replace(/%0(\d+)d/, (_match, digits: string) =>
+      String(frameNumber).padStart(Number(digits), '0'),
+    );
+  });
+}
+
+/** RGB bytes of a decoded file as it is best looked at. */
+function visiblePixels(image: DecodedImage, map: ManifestMap): Uint8Array {
+  const texels = image.width * image.height;
+  const pixels = new Uint8Array(3 * texels);
+  const isNormal = map.channels[0].quantity === 'normal-east';
+  const shown = isNormal ? map.channels : [shownChannel(map)];
+  for (let c = 0; c < 3; c++) {
+    const channel = shown[isNormal ? c : 0];
+    const value = decodedValues(image, channel);
+    const [low, high] = visibleRange(channel);
+    for (let i = 0; i < texels; i++) pixels[3 * i + c] = Math.round((255 * (value(i) - low)) / (high - low));
+  }
+  return pixels;
+}
+
+/** The vertical channel where there is one, else the first. */
+function shownChannel({ channels }: ManifestMap): ManifestChannel {
+  return channels.find(({ quantity }) => quantity.endsWith('-up')) ?? channels[0];
+}
+
+function visibleRange({ quantity, written }: ManifestChannel): readonly [number, number] {
+  if (quantity.startsWith('normal')) return [-1, 1];
+  if (quantity === 'foam') return [0, 1];
+  if (quantity === 'jacobian') return [written.min, written.max];
+  const largest = Math.max(-written.min, written.max) || 1;
+  return [-largest, largest];
+}
+
+function decodedValues(image: DecodedImage, channel: ManifestChannel): (i: number) => number {
+  const plane = image.planes[image.channels.indexOf(channel.name)];
+  const { scale, offset } = channel.decode;
+  if (image.sample === 'half') return (i) => numberFromHalf(plane[i]) * scale + offset;
+  const largest = image.sample === 'float' ? 1 : LARGEST_CODE[image.sample];
+  return (i) => (plane[i] / largest) * scale + offset;
+}
