@@ -78,7 +78,8 @@ export function wavenumber(omegaRadPerS: number, water: Water): number {
     else high = k;
     let next = k - excess / groupVelocity(k, water);
     if (!(next > low && next < high)) next = high === Infinity ? 2 * low : 0.5 * (low + high);
-    if (Math.abs(next - k) <= 2 * Number.EPSILON * k) return next;
+    // Newton doubles the digits: the step after this one would be below the last.
+    if (Math.abs(next - k) <= 1e-9 * k) return next;
     k = next;
   }
   return k;

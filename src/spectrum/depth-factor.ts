@@ -17,7 +17,6 @@ export function kitaigorodskiiFactor(water: Water): (omega: number) => number {
   const gravityOnly: Water = { ...water, surfaceTensionNpm: 0 };
   return (omega) => {
     const kh = wavenumber(omega, gravityOnly) * h;
-    if (kh > 350) return 1;
     if (kh === 0) return 0;
     return Math.tanh(kh) ** 2 / (1 + (2 * kh) / Math.sinh(2 * kh));
   };

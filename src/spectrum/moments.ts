@@ -11,9 +11,9 @@ export interface FrequencyLimits {
 const BENDS = [0.1, 0.3, 0.6, 0.85, 1, 1.2, 1.6, 2.5, 5, 30];
 
 /**
- * The limits used where none are given: .05 to 1000 peak frequencies. An omega^-5 tail beyond them holds 1.3e-12 of
- * m0 and m-1, 1e-9 of m1, 1.3e-6 of m2, 1 per mille of m3; its m4 grows with the logarithm of the limit, so m4 means
- * nothing without one.
+ * The limits used where none are given: .05 to 1000 peak frequencies. Beyond them an omega^-5 tail holds some 1e-12 of
+ * m0, 1e-9 of m1, 1e-6 of m2, 1e-3 of m3, an omega^-4 tail a thousand times as much; the moment of order 4 (or 3) of
+ * such tails grows with the logarithm of the limit and means nothing without one.
  */
 export function defaultLimits(spectrum: FrequencySpectrum): FrequencyLimits {
   return { fromRadPerS: 0.05 * spectrum.omegaPeak, toRadPerS: 1000 * spectrum.omegaPeak };

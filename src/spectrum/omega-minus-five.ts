@@ -5,13 +5,12 @@
  *
  * Largest at omega_p. Source: Pierson & Moskowitz 1964, written with omega_p instead of the wind.
  *
- * @param omega angular frequency, rad/s
+ * @param omega angular frequency, rad/s, >= 0
  * @param omegaPeak angular frequency of the peak, rad/s, > 0
- * @returns (rad/s)^-5; 0 for omega <= 0
+ * @returns (rad/s)^-5; 0 at omega = 0
  */
 export function omegaMinusFive(omega: number, omegaPeak: number): number {
-  if (!(omega > 0)) return 0;
   const exponent = 1.25 * (omegaPeak / omega) ** 4;
-  // exp has underflowed by here; below some 1e-62 rad/s omega^-5 would overflow and give 0 * Infinity.
+  // exp has underflowed by here; further down omega^5 would too, and 0 / 0 is not a number.
   return exponent > 745 ? 0 : Math.exp(-exponent) / omega ** 5;
 }

@@ -1,12 +1,23 @@
 import type { Water } from '../physics/water.ts';
 import { type BretschneiderParameters, bretschneider } from './bretschneider.ts';
 import { type Cos2sParameters, cos2s } from './cos-2s.ts';
+import { type DonelanBannerParameters, donelanBanner } from './donelan-banner.ts';
+import { type DonelanHamiltonHuiParameters, donelanHamiltonHui } from './donelan-hamilton-hui.ts';
+import {
+  type ElfouhailyParameters,
+  type ElfouhailySpreadingParameters,
+  elfouhaily,
+  elfouhailySpreading,
+} from './elfouhaily.ts';
 import type { DirectionalSpreading, FrequencySpectrum } from './form.ts';
 import { type HasselmannParameters, hasselmann } from './hasselmann.ts';
 import { type JonswapParameters, jonswap } from './jonswap.ts';
 import { type MitsuyasuParameters, mitsuyasu } from './mitsuyasu.ts';
+import { type OchiHubbleParameters, ochiHubble } from './ochi-hubble.ts';
 import { type PiersonMoskowitzParameters, piersonMoskowitz } from './pierson-moskowitz.ts';
 import { type TmaParameters, tma } from './tma.ts';
+import { type TorsethaugenParameters, torsethaugen } from './torsethaugen.ts';
+import { type WrappedNormalParameters, wrappedNormal } from './wrapped-normal.ts';
 
 /** The parameters of a published frequency spectrum, by its form; plain numbers, so that they can be written down. */
 export interface SpectrumForms {
@@ -14,6 +25,10 @@ export interface SpectrumForms {
   jonswap: JonswapParameters;
   tma: TmaParameters;
   bretschneider: BretschneiderParameters;
+  'donelan-hamilton-hui': DonelanHamiltonHuiParameters;
+  elfouhaily: ElfouhailyParameters;
+  'ochi-hubble': OchiHubbleParameters;
+  torsethaugen: TorsethaugenParameters;
 }
 
 /** The parameters of a published directional spreading, by its form. */
@@ -21,6 +36,9 @@ export interface SpreadingForms {
   'cos-2s': Cos2sParameters;
   mitsuyasu: MitsuyasuParameters;
   hasselmann: HasselmannParameters;
+  'donelan-banner': DonelanBannerParameters;
+  'wrapped-normal': WrappedNormalParameters;
+  elfouhaily: ElfouhailySpreadingParameters;
 }
 
 export type SpectrumForm = keyof SpectrumForms;
@@ -43,12 +61,19 @@ const SPECTRUM_BUILDERS: { readonly [F in SpectrumForm]: SpectrumBuilder<Spectru
   jonswap,
   tma,
   bretschneider,
+  'donelan-hamilton-hui': donelanHamiltonHui,
+  elfouhaily,
+  'ochi-hubble': ochiHubble,
+  torsethaugen,
 };
 
 const SPREADING_BUILDERS: { readonly [F in SpreadingForm]: SpreadingBuilder<SpreadingForms[F]> } = {
   'cos-2s': cos2s,
   mitsuyasu,
   hasselmann,
+  'donelan-banner': donelanBanner,
+  'wrapped-normal': wrappedNormal,
+  elfouhaily: elfouhailySpreading,
 };
 
 /** The published forms there are, in the order of registration. */

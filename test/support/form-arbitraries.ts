@@ -32,6 +32,12 @@ const peakEnhancement = between(1, 10);
 const swellNarrowing = between(0, 1);
 const inverseWaveAge = spread(0.1, 6);
 
+const elfouhailyWind = {
+  windSpeedMps: between(0.5, 40),
+  inverseWaveAge: between(0.5, 5),
+  frictionVelocityMps: between(0.01, 3),
+};
+
 /** Parameters for every registered spectrum: a new form does not compile until it is here, and so meets all laws. */
 export const SPECTRUM_ARBITRARIES: { readonly [F in SpectrumForm]: fc.Arbitrary<SpectrumForms[F]> } = {
   'pierson-moskowitz': fc.record({
@@ -44,6 +50,30 @@ export const SPECTRUM_ARBITRARIES: { readonly [F in SpectrumForm]: fc.Arbitrary<
     form: fc.constant('bretschneider' as const),
     significantHeightM,
     omegaPeakRadPerS,
+  }),
+  'donelan-hamilton-hui': fc.record({
+    form: fc.constant('donelan-hamilton-hui' as const),
+    omegaPeakRadPerS,
+    inverseWaveAge,
+  }),
+  elfouhaily: fc.record({ form: fc.constant('elfouhaily' as const), ...elfouhailyWind }),
+  'ochi-hubble': fc
+    .record({ height: significantHeightM, share: between(0, 1), omega: spread(0.2, 3), ratio: between(1, 8) })
+    .chain(({ height, share, omega, ratio }) =>
+      fc.record({
+        form: fc.constant('ochi-hubble' as const),
+        lowHeightM: fc.constant(share * height),
+        lowOmegaPeakRadPerS: fc.constant(omega),
+        lowShape: between(0.7, 8),
+        highHeightM: fc.constant((1 - share) * height),
+        highOmegaPeakRadPerS: fc.constant(omega * ratio),
+        highShape: between(0.7, 8),
+      }),
+    ),
+  torsethaugen: fc.record({
+    form: fc.constant('torsethaugen' as const),
+    significantHeightM: fc.oneof(fc.constant(0), spread(0.1, 20)),
+    omegaPeakRadPerS: between(2, 24).map((Tp) => (2 * Math.PI) / Tp),
   }),
 };
 
@@ -66,5 +96,15 @@ export const SPREADING_ARBITRARIES: { readonly [F in SpreadingForm]: fc.Arbitrar
     omegaPeakRadPerS,
     inverseWaveAge,
     swellNarrowing,
+  }),
+  'donelan-banner': fc.record({ form: fc.constant('donelan-banner' as const), omegaPeakRadPerS }),
+  'wrapped-normal': fc.record({
+    form: fc.constant('wrapped-normal' as const),
+    standardDeviationRad: spread(0.01, 10),
+  }),
+  elfouhaily: fc.record({
+    form: fc.constant('elfouhaily' as const),
+    ...elfouhailyWind,
+    gravityMps2: between(1, 25),
   }),
 };

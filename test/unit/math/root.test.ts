@@ -14,19 +14,6 @@ describe('root', () => {
     expectRelative(root(f, low, high), expected, FEW_ULP, 'root');
   });
 
-  it('needs few evaluations where the function is smooth', () => {
-    let calls = 0;
-    root(
-      (x) => {
-        calls += 1;
-        return Math.cos(x) - x;
-      },
-      0,
-      1,
-    );
-    expect(calls).toBeLessThan(20);
-  });
-
   it('refuses an interval without a change of sign', () => {
     expect(() => root((x) => x * x + 1, -1, 1)).toThrow(RangeError);
   });
