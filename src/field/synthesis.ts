@@ -53,10 +53,7 @@ export function synthesis(
   const rateSpectrum = moving ? new Float64Array(2 * N * N) : null;
   const packed = new Float64Array(2 * N * N);
   const buffers = new Map<FieldName, Float64Array>();
-  for (const [a, b] of pairs) {
-    buffers.set(a, new Float64Array(N * N));
-    buffers.set(b, buffers.get(b) ?? new Float64Array(N * N));
-  }
+  for (const name of options.fields) buffers.set(name, new Float64Array(N * N));
   const q = horizontalGain(waves, options.depthM, options.horizontalScale);
   const cosine = new Float64Array(waves.frameCount);
   const sine = new Float64Array(waves.frameCount);

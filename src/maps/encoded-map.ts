@@ -41,8 +41,8 @@ export interface MapStorage {
 const UNITS_PER_SI: Readonly<Record<Unit, number>> = { m: 1, cm: 100, 'm/s': 1, 'cm/s': 100, '1': 1 };
 
 /**
- * Stores a map's values: rows put in file order, units applied, samples rounded to nearest (halves to even), integers
- * clamped and counted.
+ * Stores a map's values: rows put in file order, units applied, samples rounded to nearest (floats in the middle to
+ * even, codes up), codes beyond the range clamped and counted.
  *
  * @param values SI values by quantity: Float64Array N*N, row 0 south
  * @param storage how to store them
@@ -112,6 +112,7 @@ function fillPlane(
       } else {
         let code = Math.round(dither === null ? stored : stored + dither[o]);
         if (code < 0 || code > largest) {
+          if (!Number.isFinite(code)) throw notFinite(source, channel, N);
           clipped++;
           code = code < 0 ? 0 : largest;
         }

@@ -8,14 +8,6 @@
  * older is weaker by d^N, so one loop's warm-up from nothing already holds the periodic state, to the bit.
  */
 
-/** Decay, ramp and residue of one cascade's foam. */
-export interface FoamLaw {
-  /** d, factor per frame. */
-  readonly decayPerFrame: number;
-  /** r = exp(-T / tau), what is left of foam after one loop; 0 keeps it in the map. */
-  readonly removedResidue: number;
-}
-
 /**
  * Source strength of every J code; Float64Array of 65536.
  *
@@ -45,9 +37,7 @@ export function advanceFoam(
   decayPerFrame: number,
 ): void {
   for (let i = 0; i < foam.length; i++) {
-    const faded = foam[i] * decayPerFrame;
-    const fresh = source[codes[i]];
-    foam[i] = fresh > faded ? fresh : faded;
+    foam[i] = Math.max(source[codes[i]], foam[i] * decayPerFrame);
   }
 }
 

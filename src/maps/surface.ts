@@ -11,7 +11,11 @@ import type { FrameFields } from '../field/frame-fields.ts';
  * @param fields strain of the frame
  */
 export function fillJacobian(out: Float64Array, fields: FrameFields): void {
-  const { strainEastEast: Dxx, strainNorthNorth: Dyy, strainEastNorth: Dxy } = fields as Required<FrameFields>;
+  const {
+    strainEastEast: Dxx,
+    strainNorthNorth: Dyy,
+    strainEastNorth: Dxy,
+  } = fields as Required<FrameFields>;
   for (let i = 0; i < out.length; i++) out[i] = (1 + Dxx[i]) * (1 + Dyy[i]) - Dxy[i] * Dxy[i];
 }
 
@@ -25,7 +29,12 @@ export function fillJacobian(out: Float64Array, fields: FrameFields): void {
  * @param east, north, up Float64Array of N*N each, filled in the fields' order
  * @param fields slope and strain of the frame
  */
-export function fillNormals(east: Float64Array, north: Float64Array, up: Float64Array, fields: FrameFields): void {
+export function fillNormals(
+  east: Float64Array,
+  north: Float64Array,
+  up: Float64Array,
+  fields: FrameFields,
+): void {
   const {
     slopeEast: Sx,
     slopeNorth: Sy,
@@ -38,9 +47,10 @@ export function fillNormals(east: Float64Array, north: Float64Array, up: Float64
     const y = Sx[i] * Dxy[i] - (1 + Dxx[i]) * Sy[i];
     const z = (1 + Dxx[i]) * (1 + Dyy[i]) - Dxy[i] * Dxy[i];
     const length = Math.sqrt(x * x + y * y + z * z);
-    // All three vanish only where the surface is pinched to a point: any direction is as good, up is expected.
-    east[i] = length > 0 ? x / length : 0;
-    north[i] = length > 0 ? y / length : 0;
-    up[i] = length > 0 ? z / length : 1;
+    // All three vanish only where the surface is pinched to a point: any direction is as good, up is expected. A
+    // length that is not a number stays one, for the encoder to refuse.
+    east[i] = length === 0 ? 0 : x / length;
+    north[i] = length === 0 ? 0 : y / length;
+    up[i] = length === 0 ? 1 : z / length;
   }
 }

@@ -24,7 +24,8 @@ export function smoothstep(t: number): number {
  *
  *     up(k) = smoothstep(1/2 + ln(k/b) / (2 ln F))
  *
- * Two cascades that share a border weigh up(k) and 1 - up(k), so every wavenumber is counted once.
+ * Of two cascades that share a border the finer takes up(k) and the longer leaves it, so every wavenumber is counted
+ * once.
  */
 export function energyAbove(kRadPerM: number, border: BandBorder): number {
   const { kRadPerM: b, fade: F } = border;
@@ -32,10 +33,17 @@ export function energyAbove(kRadPerM: number, border: BandBorder): number {
   return smoothstep(0.5 + Math.log(kRadPerM / b) / (2 * Math.log(F)));
 }
 
-/** Energy weight of a band at a wavenumber (rad/m), 0..1. */
+/**
+ * Energy weight of a band at a wavenumber (rad/m), 0..1: what passes its low border and not its high one,
+ *
+ *     w(k) = up_low(k) - up_high(k)
+ *
+ * Summed over neighbours this telescopes to 1 however the borders overlap, as long as they come in order
+ * (a product of the two would count overlaps of three bands twice).
+ */
 export function bandWeight(kRadPerM: number, band: Band): number {
   const above = band.low === null ? 1 : energyAbove(kRadPerM, band.low);
-  return above === 0 ? 0 : above * (1 - energyAbove(kRadPerM, band.high));
+  return above === 0 ? 0 : Math.max(0, above - energyAbove(kRadPerM, band.high));
 }
 
 /** Smallest and largest wavenumber at which a band weighs anything, rad/m. */

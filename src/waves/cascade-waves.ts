@@ -39,7 +39,11 @@ export function systemTables(
   const kMax = Math.max((2 * Math.PI) / SHORTEST_REPORTED_M, cornerK);
   return request.systems.map((system) => {
     const spectrum = directionalSpectrum(system, request.water, request.gains);
-    return radialTable(spectrum, LONGEST_PERIOD_SHARE * LONGEST_PERIOD_SHARE * spectrum.peakWavenumberRadPerM, kMax);
+    return radialTable(
+      spectrum,
+      LONGEST_PERIOD_SHARE * LONGEST_PERIOD_SHARE * spectrum.peakWavenumberRadPerM,
+      kMax,
+    );
   });
 }
 

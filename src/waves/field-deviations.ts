@@ -27,7 +27,11 @@ export interface FieldDeviations {
  * @param depthM water depth, m; `Infinity` for deep
  * @param horizontalScale factor on the horizontal displacement
  */
-export function fieldDeviations(waves: WaveAmplitudes, depthM: number, horizontalScale: number): FieldDeviations {
+export function fieldDeviations(
+  waves: WaveAmplitudes,
+  depthM: number,
+  horizontalScale: number,
+): FieldDeviations {
   const { amplitude: A, turns, frameCount } = waves;
   const N = waves.lattice.resolution;
   const dk = wavenumberStep(waves.lattice);
@@ -65,7 +69,9 @@ export function fieldDeviations(waves: WaveAmplitudes, depthM: number, horizonta
       sum[11] += height * ((kx * kx + ky * ky) * q) ** 2;
     }
   }
-  const [height, displacementEast, displacementNorth, velocityEast, velocityNorth, velocityUp] = sum.map(Math.sqrt);
+  const [height, displacementEast, displacementNorth, velocityEast, velocityNorth, velocityUp] = sum.map(
+    Math.sqrt,
+  );
   const [slopeEast, slopeNorth, strainEastEast, strainNorthNorth, strainEastNorth, compression] = sum
     .subarray(6)
     .map(Math.sqrt);

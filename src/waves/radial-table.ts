@@ -24,7 +24,11 @@ export interface RadialTable {
 const NODES_PER_LN = 512;
 
 /** Tabulates a spectrum between two wavenumbers, rad/m; outside them its energy counts as zero. */
-export function radialTable(spectrum: DirectionalSpectrum, kMinRadPerM: number, kMaxRadPerM: number): RadialTable {
+export function radialTable(
+  spectrum: DirectionalSpectrum,
+  kMinRadPerM: number,
+  kMaxRadPerM: number,
+): RadialTable {
   const lnFirst = Math.log(kMinRadPerM);
   const count = Math.ceil((Math.log(kMaxRadPerM) - lnFirst) * NODES_PER_LN) + 2;
   const wavenumber = new Float64Array(count);

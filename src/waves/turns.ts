@@ -31,4 +31,3 @@ export function shownShare(turns: number, frameCount: number): number {
   const x = Math.abs(turns) / (frameCount / 2);
   return x >= 1 ? 0 : 1 - smoothstep((x - FADE_FROM) / (1 - FADE_FROM));
 }
-

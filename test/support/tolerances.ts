@@ -44,3 +44,18 @@ export function expectRelative(actual: number, expected: number, relative: numbe
     relative * Math.abs(expected),
   );
 }
+
+/**
+ * A transformed field against a direct sum, as a share of the field's root mean square: some twenty roundings of a
+ * transform's largest terms, which are up to a hundred times the root mean square.
+ */
+export const TRANSFORM = 1e-13;
+
+/** Deviations predicted from the waves against those of a whole loop: two sums of some 10^5 terms. */
+export const PARSEVAL = 1e-12;
+
+/** Sum of cell variances against the one-dimensional integral of the band. */
+export const CELL_SUM = 1e-3;
+
+/** Linear interpolation in a radial table, as a share of the largest tabulated value. */
+export const RADIAL_TABLE = 4e-5;
