@@ -123,8 +123,8 @@ function resolvedRange(
   if (range !== null && (isBounded ? range.policy === 'natural' : isNatural || range.policy !== 'natural'))
     return range;
   const units = extent === 'ratio' ? 'a number' : `a number with ${unitNames(extent)}`;
-  const nearest =
-    typeof written === 'string' ? nearestOrPrefix(written, ['survey', 'natural', '6 sigmas']) : null;
+  const words = isNatural ? ['survey', 'natural'] : ['survey'];
+  const nearest = typeof written === 'string' ? nearestOrPrefix(written, words) : null;
   findings.push({
     path,
     expected: isBounded

@@ -9,16 +9,21 @@ export type Dimension =
   | 'acceleration'
   | 'ratio';
 
+/** A factor to SI as a ratio: dividing by 100 rounds once, multiplying by 0.01 twice (70 % would not be 0.7). */
+type Factor = readonly [multiplier: number, divisor: number];
+
 interface UnitTable {
-  /** Unit of a bare number, as messages name it; a key of `units`, or empty for a pure number. */
+  /** Unit of a bare number, as messages name it; empty for a pure number. */
   readonly bare: string;
   /** Factor of a bare number to SI and radians. */
-  readonly bareFactor: number;
+  readonly bareFactor: Factor;
   /** Factor of each accepted unit to SI and radians. */
-  readonly units: Readonly<Record<string, number>>;
+  readonly units: Readonly<Record<string, Factor>>;
 }
 
-const RAD_PER_DEG = Math.PI / 180;
+const ONE: Factor = [1, 1];
+const RAD_PER_DEG: Factor = [Math.PI, 180];
+const MPS_PER_KNOT: Factor = [1852, 3600];
 
 /**
  * The units a sea file may use. Bare numbers are SI, but for directions, which are nautical degrees there.
@@ -27,16 +32,24 @@ const RAD_PER_DEG = Math.PI / 180;
 export const UNITS: Readonly<Record<Dimension, UnitTable>> = Object.freeze({
   speed: {
     bare: 'm/s',
-    bareFactor: 1,
-    units: { 'm/s': 1, 'km/h': 1 / 3.6, kn: 1852 / 3600, kt: 1852 / 3600 },
+    bareFactor: ONE,
+    units: { 'm/s': ONE, 'km/h': [1000, 3600], kn: MPS_PER_KNOT, kt: MPS_PER_KNOT },
   },
-  length: { bare: 'm', bareFactor: 1, units: { m: 1, km: 1000, cm: 0.01, mm: 0.001, ft: 0.3048, nmi: 1852 } },
-  time: { bare: 's', bareFactor: 1, units: { s: 1, ms: 0.001, min: 60, h: 3600 } },
-  direction: { bare: 'deg', bareFactor: RAD_PER_DEG, units: { deg: RAD_PER_DEG, '°': RAD_PER_DEG, rad: 1 } },
-  density: { bare: 'kg/m3', bareFactor: 1, units: { 'kg/m3': 1, 'g/cm3': 1000 } },
-  'surface tension': { bare: 'N/m', bareFactor: 1, units: { 'N/m': 1, 'mN/m': 0.001 } },
-  acceleration: { bare: 'm/s2', bareFactor: 1, units: { 'm/s2': 1 } },
-  ratio: { bare: '', bareFactor: 1, units: { '%': 0.01 } },
+  length: {
+    bare: 'm',
+    bareFactor: ONE,
+    units: { m: ONE, km: [1000, 1], cm: [1, 100], mm: [1, 1000], ft: [3048, 10000], nmi: [1852, 1] },
+  },
+  time: { bare: 's', bareFactor: ONE, units: { s: ONE, ms: [1, 1000], min: [60, 1], h: [3600, 1] } },
+  direction: {
+    bare: 'deg',
+    bareFactor: RAD_PER_DEG,
+    units: { deg: RAD_PER_DEG, '°': RAD_PER_DEG, rad: ONE },
+  },
+  density: { bare: 'kg/m3', bareFactor: ONE, units: { 'kg/m3': ONE, 'g/cm3': [1000, 1] } },
+  'surface tension': { bare: 'N/m', bareFactor: ONE, units: { 'N/m': ONE, 'mN/m': [1, 1000] } },
+  acceleration: { bare: 'm/s2', bareFactor: ONE, units: { 'm/s2': ONE } },
+  ratio: { bare: '', bareFactor: ONE, units: { '%': [1, 100] } },
 });
 
 const NUMBER = '[-+]?(?:[0-9]+(?:\\.[0-9]*)?|\\.[0-9]+)(?:[eE][-+]?[0-9]+)?';
@@ -56,12 +69,16 @@ export function quantityFromText(text: string, dimension: Dimension): number | n
   if (!quantityPattern(dimension).test(text)) return null;
   const [number] = new RegExp(NUMBER).exec(text) as RegExpExecArray;
   const unit = text.slice(text.indexOf(number) + number.length).trim();
-  return Number(number) * UNITS[dimension].units[unit];
+  return scaled(Number(number), UNITS[dimension].units[unit]);
 }
 
 /** The value of a bare number, in SI and radians. */
 export function quantityFromNumber(number: number, dimension: Dimension): number {
-  return number * UNITS[dimension].bareFactor;
+  return scaled(number, UNITS[dimension].bareFactor);
+}
+
+function scaled(number: number, [multiplier, divisor]: Factor): number {
+  return (number * multiplier) / divisor;
 }
 
 /** The accepted units as a list for messages: `m/s, km/h, kn, kt`. */

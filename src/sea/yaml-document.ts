@@ -1,4 +1,15 @@
-import { type Document, isAlias, isMap, isScalar, isSeq, LineCounter, type Node, parseDocument } from 'yaml';
+import {
+  type Document,
+  isAlias,
+  isMap,
+  isScalar,
+  isSeq,
+  LineCounter,
+  type Node,
+  type Pair,
+  parseDocument,
+  type YAMLMap,
+} from 'yaml';
 import type { InputProblem } from '../errors.ts';
 import { type DocumentPath, type Place, pathText, shortened } from './findings.ts';
 
@@ -38,7 +49,8 @@ export function yamlDocument(text: string): YamlDocument {
       lineCounter: lines,
       prettyErrors: false,
       uniqueKeys: false,
-      logLevel: 'silent',
+      // No tag makes anything but text, numbers, lists and groups.
+      resolveKnownTags: false,
     });
   } catch (error) {
     if (!(error instanceof RangeError)) throw error;
@@ -158,7 +170,7 @@ function placeOf(
     if (isSeq(target) && typeof step === 'number') {
       node = target.items[step];
     } else if (isMap(target)) {
-      const pair = target.items.find(({ key }) => isScalar(key) && key.value === step);
+      const pair = pairOf(target, step);
       const last = depth === path.length - 1;
       // An empty value has no place of its own worth pointing at: its key is where to type.
       const isEmpty = isScalar(pair?.value) && pair.value.value === null;
@@ -170,4 +182,16 @@ function placeOf(
     place = placeAt(startOf(node));
   }
   return place;
+}
+
+/** Pairs by key, so that a file of nothing but wrong keys is looked up in a time that grows with its size. */
+const PAIRS = new WeakMap<YAMLMap, Map<unknown, Pair>>();
+
+function pairOf(map: YAMLMap, step: string | number): Pair | undefined {
+  let pairs = PAIRS.get(map);
+  if (pairs === undefined) {
+    pairs = new Map(map.items.map((pair) => [isScalar(pair.key) ? pair.key.value : undefined, pair]));
+    PAIRS.set(map, pairs);
+  }
+  return pairs.get(step);
 }
