@@ -1,3 +1,5 @@
+import { DEVELOPED_FREQUENCY } from './growth-laws/law.ts';
+
 /** What a growth law says of a wind sea: the numbers of its JONSWAP spectrum. */
 export interface JonswapGrowth {
   readonly alpha: number;
@@ -7,9 +9,6 @@ export interface JonswapGrowth {
   readonly dimensionlessFetch: number;
   readonly fullyDeveloped: boolean;
 }
-
-/** f_p U10 / g of a fully developed sea. Source: Pierson & Moskowitz 1964 with U at 10 m (from memory). */
-const DEVELOPED_FREQUENCY = 0.133;
 
 /** The dimensionless fetch at which the JONSWAP peak frequency has come down to that of a fully developed sea. */
 export const DEVELOPED_FETCH: number = (22 / (2 * Math.PI * DEVELOPED_FREQUENCY)) ** 3;

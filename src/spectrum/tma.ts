@@ -50,3 +50,24 @@ export function tmaAlpha(
   const unit = tma({ form: 'tma', alpha: 1, omegaPeakRadPerS, peakEnhancement }, water);
   return significantHeightM ** 2 / 16 / spectralMoment(unit, 0);
 }
+
+/** alpha and gamma of a TMA sea, from its wind and its own peak wave. */
+export interface TmaLevel {
+  readonly alpha: number;
+  readonly peakEnhancement: number;
+}
+
+/**
+ * Level and peak enhancement of a wind sea on finite depth.
+ *
+ *     kappa = 2 pi U10^2 / (g L_p);  alpha = .0078 kappa^.49;  gamma = 2.47 kappa^.39
+ *
+ * Source: Bouws et al. 1985, as found in public codes. Check: test/published/depth-factor.test.ts.
+ *
+ * @param windSpeedMps U10, m/s, > 0
+ * @param peakWavelengthM L_p, wavelength of the peak in this depth, m, > 0
+ */
+export function tmaLevel(windSpeedMps: number, peakWavelengthM: number, gravityMps2: number): TmaLevel {
+  const kappa = (2 * Math.PI * windSpeedMps ** 2) / (gravityMps2 * peakWavelengthM);
+  return { alpha: 0.0078 * kappa ** 0.49, peakEnhancement: 2.47 * kappa ** 0.39 };
+}

@@ -1,4 +1,4 @@
-import { STANDARD_GRAVITY_MPS2, type Water } from '../physics/water.ts';
+import type { Water } from '../physics/water.ts';
 import type { FrequencySpectrum, SpectralDensity } from './form.ts';
 import { highestPeak } from './peaks.ts';
 
@@ -61,7 +61,7 @@ export function torsethaugen(parameters: TorsethaugenParameters, water: Water): 
 export function torsethaugenParts(
   significantHeightM: number,
   peakPeriodS: number,
-  gravityMps2: number = STANDARD_GRAVITY_MPS2,
+  gravityMps2: number,
 ): readonly [TorsethaugenPart, TorsethaugenPart] {
   const [Hs, Tp, g] = [significantHeightM, peakPeriodS, gravityMps2];
   const Tf = 6.6 * Math.cbrt(Hs);

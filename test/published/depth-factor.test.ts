@@ -4,7 +4,7 @@ import { STANDARD_GRAVITY_MPS2, type Water } from '../../src/physics/water.ts';
 import { kitaigorodskiiFactor } from '../../src/spectrum/depth-factor.ts';
 import { jonswapAlpha, jonswapDensity } from '../../src/spectrum/jonswap.ts';
 import { significantHeight } from '../../src/spectrum/moments.ts';
-import { tma, tmaAlpha } from '../../src/spectrum/tma.ts';
+import { tma, tmaAlpha, tmaLevel } from '../../src/spectrum/tma.ts';
 import { expectPrinted, expectRelative, MOMENT, POWERS } from '../support/tolerances.ts';
 
 const checkValues: { phi: { x: number; phi: number; tv: number }[] } = JSON.parse(
@@ -87,6 +87,16 @@ describe('TMA, Bouws et al. 1985', () => {
     const inDepth = tmaAlpha(1, omegaPeakRadPerS, 3.3, water(depth, 9.81));
     const sea = tma({ ...shape, alpha: inDepth }, water(depth, 9.81));
     expectRelative(significantHeight(sea), 1, MOMENT, 'Hs stated in this depth');
+  });
+
+  // Laws of level and enhancement verified in ScientiMate at baa75db3; values computed elsewhere.
+  it.each([
+    [10, 50, '.00880770', '2.720794'],
+    [15, 100, '.00933098', '2.848690'],
+  ])('level in a wind of %d m/s with waves of %d m', (wind, length, alpha, gamma) => {
+    const level = tmaLevel(wind, length, STANDARD_GRAVITY_MPS2);
+    expectPrinted(level.alpha, alpha, 'alpha');
+    expectPrinted(level.peakEnhancement, gamma, 'gamma');
   });
 
   it('is its parent in deep water', () => {

@@ -125,3 +125,76 @@ describe('swell term of Horvath 2015', () => {
     }
   });
 });
+
+describe('hyperbolic secant, Donelan, Hamilton & Hui 1985 and Banner 1990', () => {
+  const spreading = directionalSpreading({ form: 'donelan-banner', omegaPeakRadPerS: 0.7 });
+
+  // Exponents verified in pywafo at c831ec8e; values computed elsewhere.
+  it.each([
+    [0.3, '1.24'],
+    [0.56 + 1e-9, '1.228245'],
+    [0.7, '1.641602'],
+    [0.95 - 1e-9, '2.44164'],
+    [0.95 + 1e-9, '2.437217'],
+    [1, '2.28'],
+    [1.3, '1.621095'],
+    [1.6 - 1e-9, '1.23760'],
+    [1.6 + 1e-9, '1.237497'],
+    [2, '.960346'],
+    [3, '.694175'],
+    [5, '.543621'],
+    [10, '.458826'],
+  ])('beta at %f omega_p', (ratio, printed) => {
+    expectPrinted(spreading.parameter(0.7 * ratio), printed, 'beta');
+  });
+
+  it('both pieces meet at 1.6 omega_p', () => {
+    expectRelative(spreading.parameter(1.6 * 0.7 * (1 + 1e-9)), 1.237497, 2e-4, 'beta');
+  });
+
+  it.each([
+    [0.5, '.340613'],
+    [1, '.688116'],
+    [1.24, '.776697'],
+    [2, '.904151'],
+    [2.28, '.925066'],
+    [2.44, '.934128'],
+    // The beta of r1 = 15/16, where a toolbox's help text says .89.
+    [2.50811, '.93750'],
+  ])('r1 of beta = %f', (beta, printed) => {
+    const fixed: DirectionalSpreading = { ...spreading, parameter: () => beta };
+    expectPrinted(moment(fixed, 1), printed, 'r1');
+  });
+
+  // 1 / tanh(pi beta): what the circle cuts off the published normaliser.
+  it.each([
+    [0.5, '1.09033'],
+    [1, '1.003742'],
+    [1.24, '1.000827'],
+  ])('normaliser at beta = %f', (beta, printed) => {
+    expectPrinted(spreading.normaliser(beta) / (0.5 * beta), printed, 'N');
+  });
+});
+
+describe('wrapped normal', () => {
+  // Computed elsewhere.
+  it.each([
+    [10, '2.285771', '.984885'],
+    [20, '1.142885', '.940895'],
+    [30, '.761924', '.871902'],
+    [40, '.571443', '.783727'],
+  ])('standard deviation %d degrees', (degrees, atZero, r1) => {
+    const sigma = (degrees * Math.PI) / 180;
+    const spreading = directionalSpreading({ form: 'wrapped-normal', standardDeviationRad: sigma });
+    expectPrinted(density(spreading, 1, 0), atZero, 'D(0)');
+    expectPrinted(moment(spreading, 1), r1, 'r1');
+  });
+
+  it('r1 = exp(-sigma^2 / 2), r2 = exp(-2 sigma^2), across the change of series', () => {
+    for (const sigma of [0.05, 0.5, 1.49, 1.51, 3]) {
+      const spreading = directionalSpreading({ form: 'wrapped-normal', standardDeviationRad: sigma });
+      expectRelative(1 + moment(spreading, 1), 1 + Math.exp(-(sigma ** 2) / 2), QUADRATURE, `r1 of ${sigma}`);
+      expectRelative(1 + moment(spreading, 2), 1 + Math.exp(-2 * sigma ** 2), QUADRATURE, `r2 of ${sigma}`);
+    }
+  });
+});

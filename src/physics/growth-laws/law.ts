@@ -19,7 +19,7 @@ export interface WaveGrowth {
 /** A published law of growth. */
 export type GrowthLaw = (conditions: GrowthConditions) => WaveGrowth;
 
-/** m0 g^2 / U10^4 and f_p U10 / g of a fully developed sea. Source: Pierson & Moskowitz 1964 (from memory). */
+/** m0 g^2 / U10^4 and f_p U10 / g of a fully developed sea. Source: Pierson & Moskowitz 1964 with U at 10 m (from memory). */
 export const DEVELOPED_ENERGY = 3.64e-3;
 export const DEVELOPED_FREQUENCY = 0.133;
 
