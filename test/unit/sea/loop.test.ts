@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { parseSea } from '../../../src/sea/parse.ts';
-import type { ListedCascade } from '../../../src/sea/sea.ts';
+import type { ListedCascades } from '../../../src/sea/sea.ts';
 import { placesOf, problemsOf, SOUND } from './problems.ts';
 
 function loopOf(text: string): string {
@@ -74,7 +74,7 @@ describe('loops of single cascades', () => {
     ['{ seconds: 2, frames: 30 }', 30, [15, 1]],
   ])('%s', (text, frameCount, frameRate) => {
     const { cascades } = parseSea(listed(text));
-    const [{ loop }] = (cascades as { list: ListedCascade[] }).list;
+    const [{ loop }] = (cascades as ListedCascades).list;
     expect(loop).toMatchObject({ frameCount, frameRate, firstFrame: 1 });
   });
 
