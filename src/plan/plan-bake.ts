@@ -1,7 +1,8 @@
+import { InputError } from '../errors.ts';
 import { sha256 } from '../hash.ts';
 import { angularFrequency } from '../physics/dispersion.ts';
-import type { Sea } from '../sea/sea.ts';
 import { loopSeconds } from '../sea/loop-length.ts';
+import type { Sea } from '../sea/sea.ts';
 import { OUTPUT_VERSION, VERSION } from '../version.ts';
 import { bandVariances, type SeaWavesRequest, seaWaves, systemTables } from '../waves/cascade-waves.ts';
 import { fieldDeviations } from '../waves/field-deviations.ts';
@@ -9,7 +10,13 @@ import { type RadialTable, radialIntegral } from '../waves/radial-table.ts';
 import type { CascadeWaves, WaveAmplitudes } from '../waves/wave-amplitudes.ts';
 import { canonicalJson } from './canonical-json.ts';
 import { type CascadeLayout, cascadeLayouts } from './cascade-layout.ts';
-import { cascadeReports, lossReport, seaIntegral, seaPeakWavelength, systemReports } from './cascade-report.ts';
+import {
+  cascadeReports,
+  lossReport,
+  seaIntegral,
+  seaPeakWavelength,
+  systemReports,
+} from './cascade-report.ts';
 import { costReport } from './cost.ts';
 import { plannedMap } from './encodings.ts';
 import { cascadeFoam, foamShares, plannedFoam } from './foam-plan.ts';
@@ -83,6 +90,25 @@ export function planBake(sea: Sea, options: PlanOptions = {}): PlannedBake {
 /** The waves of a plan, drawn anew from its numbers alone: what a process does that was handed a saved plan. */
 export function wavesOfPlan(plan: Plan): readonly CascadeWaves[] {
   return seaWaves(wavesRequest(plan, plan.systems, plan.cascades));
+}
+
+/**
+ * A saved plan with its waves, drawn anew and compared with those it was saved with.
+ *
+ * @param source file name for messages
+ * @throws InputError where this runtime draws other waves: its frames would not fit those of the others
+ */
+export function plannedBakeOf(plan: Plan, source = '<plan>'): PlannedBake {
+  const waves = wavesOfPlan(plan);
+  const problems = plan.cascades.flatMap(({ amplitudesHash: expected }, c) => {
+    const found = amplitudesHash(waves[c].amplitudes);
+    if (found === expected) return [];
+    const remedy =
+      'The mathematics of this runtime rounds differently: bake with the Node that saved the plan, or plan the sea anew.';
+    return [{ path: `cascades[${c}].amplitudesHash`, line: 0, column: 0, expected, found, remedy }];
+  });
+  if (problems.length > 0) throw new InputError(source, problems);
+  return { plan, waves };
 }
 
 /** The plan's hash as its content gives it. */

@@ -1,0 +1,77 @@
+import type { BakeResult, Manifest, Plan } from '../index.ts';
+import { threadWords } from './plan-report-cost.ts';
+import { type Field, fieldLines } from './table.ts';
+import { byteSize, counted, duration, metres, percent, rounded } from './wording.ts';
+
+/** What was baked, what it holds, what was lost, where it is and how long it took. */
+export function bakeSummary(plan: Plan, { folder, manifest, run }: BakeResult): string {
+  const made = `${counted(run.framesMade, 'frame')} made${run.framesReused === 0 ? '' : `, ${run.framesReused} reused`}`;
+  const cascades = plan.cascades
+    .map(({ id, resolution }) => `${id} ${resolution} x ${resolution}`)
+    .join(', ');
+  const maps = plan.cascades[0].maps.map(({ map }) => map).join(', ');
+  const fields: Field[] = [
+    ['baked', `${plan.title}: ${maps}; ${cascades}; ${counted(plan.loop.frameCount, 'frame')} a loop`],
+    ...(manifest === null ? [] : resultFields(manifest)),
+    ['files', `${folder}${manifest === null ? ' (some frames only: no foam, no manifest yet)' : ''}`],
+    [
+      'took',
+      `${duration(run.wallSeconds)} ${threadWords(run.threads)}: ${made}, ${byteSize(run.bytesWritten)} written`,
+    ],
+  ];
+  return `${fieldLines(fields).join('\n')}\n`;
+}
+
+function resultFields({ statistics, losses, files, cascades }: Manifest): Field[] {
+  const { target, measured } = statistics.significantHeightM;
+  const got = measured === null ? 'not measured: no map holds it' : `got ${metres(measured)}`;
+  const bytes = files.reduce((sum, file) => sum + file.bytes, 0);
+  const foam = cascades.flatMap(({ id, foam }) => (foam === null ? [] : [foamWords(id, foam)]));
+  return [
+    ['height', `significant, asked ${metres(target)}, ${got}`],
+    ['left out', lossWords(losses)],
+    ...(foam.length === 0 ? [] : [['foam', foam.join('; ')] as const]),
+    ...clippedFields(cascades),
+    ['size', `${counted(files.length, 'file')}, ${byteSize(bytes)}`],
+  ];
+}
+
+function lossWords({
+  notInAnyCascade,
+  zeroCells,
+  tooFastForFrames,
+  slopeVarianceLeftOut,
+}: Manifest['losses']): string {
+  const lost = notInAnyCascade + zeroCells + tooFastForFrames;
+  return `${percent(lost)} of the sea's energy; a slope variance of ${rounded(slopeVarianceLeftOut)} is roughness for the shader`;
+}
+
+function foamWords(
+  id: string,
+  { coverage, note }: NonNullable<Manifest['cascades'][number]['foam']>,
+): string {
+  const target = coverage.target === null ? '' : ` of ${percent(coverage.target)}`;
+  return `${id} covers ${percent(coverage.measured)}${target}${note === null ? '' : ` (${note})`}`;
+}
+
+/** Named only where there is something to name. */
+function clippedFields(cascades: Manifest['cascades']): Field[] {
+  const clipped = cascades.flatMap(({ id, maps }) =>
+    Object.entries(maps).flatMap(([map, { channels }]) => {
+      const texels = channels.reduce((sum, { written }) => sum + written.clipped, 0);
+      return texels === 0 ? [] : [`${id} ${map} ${counted(texels, 'texel')}`];
+    }),
+  );
+  return clipped.length === 0 ? [] : [['clipped', clipped.join(', ')]];
+}
+
+/** The same for machines: the manifest but for its list of files, which is in the folder, and the run. */
+export function bakeJson({ folder, manifest, run }: BakeResult): string {
+  const summary = manifest === null ? null : manifestSummary(manifest);
+  return `${JSON.stringify({ folder, manifest: summary, run }, null, 2)}\n`;
+}
+
+function manifestSummary({ files, ...manifest }: Manifest): object {
+  const bytes = files.reduce((sum, file) => sum + file.bytes, 0);
+  return { ...manifest, files: { count: files.length, bytes } };
+}

@@ -1,0 +1,121 @@
+// The public API, by name. The command line uses nothing else.
+
+export { BAKE_DEFAULTS, bake } from './bake/bake.ts';
+export { machineThreads } from './bake/machine.ts';
+export type { BakeOptions, BakeProgress, BakeResult, BakeStage } from './bake/options.ts';
+export { expectedMemoryBytes } from './bake/resources.ts';
+export type { RunReport } from './bake/run-report.ts';
+export {
+  CannotCreateError,
+  EXIT_STATUS,
+  type ExitStatus,
+  InputError,
+  type InputProblem,
+  InternalError,
+  LoopswellError,
+  ReadWriteError,
+  StoppedError,
+  UnavailableError,
+  UsageError,
+} from './errors.ts';
+export type { ChannelSpec, Decode, Quantity, SampleType, Unit } from './image/image.ts';
+export { manifestJsonSchema } from './manifest/json-schema.ts';
+export type {
+  HeightFigures,
+  Manifest,
+  ManifestCascade,
+  ManifestChannel,
+  ManifestConventions,
+  ManifestFile,
+  ManifestFoam,
+  ManifestLoop,
+  ManifestLosses,
+  ManifestMap,
+  ManifestSea,
+  ManifestSystem,
+} from './manifest/manifest.ts';
+export { parseManifest } from './manifest/manifest-text.ts';
+export type { Current, Water } from './physics/water.ts';
+export type {
+  CascadeFoam,
+  CascadeLoopReport,
+  CascadeReport,
+  Combine,
+  CostReport,
+  EngineName,
+  JacobianCodes,
+  LoopReport,
+  LoopSuggestion,
+  LossReport,
+  Plan,
+  PlannedCascade,
+  PlannedChannel,
+  PlannedFoam,
+  PlannedMap,
+  PlannedSystem,
+  PlanReport,
+  SeaReport,
+  SystemReport,
+} from './plan/plan.ts';
+export {
+  PLAN_DEFAULTS,
+  type PlannedBake,
+  type PlanOptions,
+  planBake,
+  plannedBakeOf,
+} from './plan/plan-bake.ts';
+export { isPlanText, parsePlan, planText } from './plan/plan-text.ts';
+export {
+  CASCADES_DEFAULTS,
+  FOAM_DEFAULTS,
+  LOOP_DEFAULTS,
+  MAPS_DEFAULTS,
+  OUTPUT_DEFAULTS,
+  RANGE_DEFAULTS,
+  SEA_WATER_DEFAULTS,
+  SEED_DEFAULT,
+  SHAPING_DEFAULTS,
+  SPREADING_DEFAULTS,
+} from './sea/defaults.ts';
+export { seaJsonSchema } from './sea/json-schema.ts';
+export {
+  loadSea,
+  type PresetSummary,
+  presetNames,
+  presetSummaries,
+  presetText,
+  type SeaText,
+  seaText,
+} from './sea/load.ts';
+export { loopSeconds } from './sea/loop-length.ts';
+export { type ParseSeaOptions, parseSea, seaFromObject } from './sea/parse.ts';
+export type {
+  AutoCascades,
+  BandGain,
+  CascadesRequest,
+  FoamRequest,
+  FrameRate,
+  ListedCascade,
+  ListedCascades,
+  Loop,
+  MapName,
+  MapRequest,
+  OutputConventions,
+  RangePolicy,
+  Sea,
+  Shaping,
+  SpectrumName,
+  SpreadingName,
+  SpreadingRequest,
+  StatedHeight,
+  SwellRequest,
+  WaveSystemRequest,
+  WindGrowth,
+  WindSeaRequest,
+} from './sea/sea.ts';
+export type { SpectrumParameters, SpreadingParameters } from './spectrum/registry.ts';
+export { writeFileAtomic } from './store/atomic-file.ts';
+export { CAUTION, OUTPUT_VERSION, VERSION } from './version.ts';
+export type { Band, BandBorder } from './waves/band.ts';
+export type { FieldDeviations } from './waves/field-deviations.ts';
+export type { CascadeWaves, WaveAmplitudes } from './waves/wave-amplitudes.ts';
