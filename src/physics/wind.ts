@@ -13,7 +13,7 @@ const STRONGEST_MPS = 80;
  *     1000 C_D = .8 + .065 U10
  *
  * Chosen among the published laws because it is one formula without a jump, made for winds from breeze to hurricane;
- * others differ from it by up to 10 % in friction velocity between 5 and 20 m/s.
+ * others differ from it by up to 11 % in friction velocity between 5 and 20 m/s.
  * Source: Wu 1982. Check: test/published/wind.test.ts.
  *
  * @param windSpeed10mMps m/s, >= 0
@@ -32,7 +32,7 @@ export function frictionVelocity(windSpeed10mMps: number): number {
  *
  *     U(z) = U10 [1 + (sqrt(C_D) / kappa) ln(z / 10)],  kappa = .4
  *
- * U19.5 / U10 is 1.057 to 1.077 for 5 to 20 m/s; the factor 1.026 printed in textbooks does not follow from any drag
+ * U19.5 / U10 is 1.056 to 1.077 for 5 to 20 m/s; the factor 1.026 printed in textbooks does not follow from any drag
  * law for the open sea.
  * Source: standard theory (from memory), drag of Wu 1982. Check: test/published/wind.test.ts.
  *

@@ -1,7 +1,7 @@
 import { logGamma } from '../math/special.ts';
 import type { DirectionalSpreading } from './form.ts';
 
-/** The largest exponent used: there the waves run within 1.2 degrees of their mean direction. */
+/** The largest exponent used: there directions spread by .8 degrees. */
 export const LARGEST_EXPONENT = 1e4;
 
 const TWO_SQRT_PI = 2 * Math.sqrt(Math.PI);

@@ -15,7 +15,7 @@ export interface DonelanBannerParameters {
  *     beta = 10^{-.4 + .8393 exp[-.567 ln q^2]} from 1.6 on
  *
  * The published form has no tanh: it integrates to 1 over the whole line, not the circle. As published it jumps by 1 %
- * at .56 and by 5 % at .95.
+ * at .56 and by .2 % at .95.
  * Source: Donelan, Hamilton & Hui 1985; Banner 1990. Check: computed beta and moments,
  * test/published/directional-spreading.test.ts.
  */
