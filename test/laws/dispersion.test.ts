@@ -24,7 +24,7 @@ function wavenumbers(water: Water): fc.Arbitrary<number> {
 const waterAndWavenumber = anyWater.chain((water) => fc.tuple(fc.constant(water), wavenumbers(water)));
 
 /** Every random check below draws this many cases. */
-const RUNS = { numRuns: 2000 };
+const RUNS = { numRuns: 1000 };
 
 describe('dispersion', () => {
   it('k -> omega -> k within 4 ulp', () => {

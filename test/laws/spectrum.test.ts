@@ -35,7 +35,7 @@ describe.each(SPECTRUM_FORMS)('%s', (form) => {
           expect(S >= 0 && S < Infinity, `S(${at}) = ${S}`).toBe(true);
         }
       }),
-      { numRuns: 500 },
+      { numRuns: 200 },
     );
   });
 
@@ -51,7 +51,7 @@ describe.each(SPECTRUM_FORMS)('%s', (form) => {
           expect(spectrum.density(near * spectrum.omegaPeak)).toBeLessThanOrEqual(highest);
         }
       }),
-      { numRuns: 500 },
+      { numRuns: 200 },
     );
   });
 
@@ -65,7 +65,7 @@ describe.each(SPECTRUM_FORMS)('%s', (form) => {
           expect(other.density(omega)).toBe(one.density(omega));
         }
       }),
-      { numRuns: 50 },
+      { numRuns: 40 },
     );
   });
 
@@ -76,7 +76,7 @@ describe.each(SPECTRUM_FORMS)('%s', (form) => {
         const stated = withSignificantHeight(parameters, water, height);
         expectRelative(significantHeight(frequencySpectrum(stated, water)), height, MOMENT, 'Hs');
       }),
-      { numRuns: 50 },
+      { numRuns: 40 },
     );
   });
 
@@ -95,7 +95,7 @@ describe.each(SPECTRUM_FORMS)('%s', (form) => {
           expectRelative(low + high, spectralMoment(spectrum, n), MOMENT, `m${n}`);
         },
       ),
-      { numRuns: 50 },
+      { numRuns: 40 },
     );
   });
 });

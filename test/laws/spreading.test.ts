@@ -49,7 +49,7 @@ describe.each(SPREADING_FORMS)('%s', (form) => {
           expect(spreading.shape(-theta, p)).toBe(shape);
         }
       }),
-      { numRuns: 500 },
+      { numRuns: 200 },
     );
   });
 
