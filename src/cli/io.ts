@@ -42,17 +42,16 @@ export function say(io: ProgramIo, text: string): void {
 }
 
 /**
- * Listens to errors of the streams while a command runs: Node ends the process for one that nobody listens to.
- * Failed writes are dealt with where they are made.
+ * Listens to errors of the streams, for good: Node ends the process for one that nobody listens to, and it comes after
+ * the write. Failed results are dealt with where they are written.
  */
-export function guardStreams(io: ProgramIo): () => void {
-  const ignore = (): void => {};
-  const streams = [io.stdout, io.stderr];
-  for (const stream of streams) stream.on('error', ignore);
-  return () => {
-    for (const stream of streams) stream.off('error', ignore);
-  };
+export function guardStreams(io: ProgramIo): void {
+  for (const stream of [io.stdout, io.stderr]) {
+    if (!stream.listeners('error').includes(ignore)) stream.on('error', ignore);
+  }
 }
+
+function ignore(): void {}
 
 function isReaderGone({ code }: NodeJS.ErrnoException): boolean {
   return code === 'EPIPE' || code === 'ERR_STREAM_DESTROYED';

@@ -57,7 +57,7 @@ ${CAUTION_LINES}`;
  * @returns the exit status, see EXIT_STATUS
  */
 export async function run(argv: readonly string[], io: ProgramIo): Promise<ExitStatus> {
-  const release = guardStreams(io);
+  guardStreams(io);
   // Read before parsing, so that a fault in parsing can be looked into as well.
   const debug = argv.includes('--debug') || (io.env.LOOPSWELL_DEBUG ?? '') !== '';
   try {
@@ -74,8 +74,6 @@ export async function run(argv: readonly string[], io: ProgramIo): Promise<ExitS
     return status;
   } catch (error) {
     return reportFailure(io, error, debug);
-  } finally {
-    release();
   }
 }
 
