@@ -97,4 +97,10 @@ describe('Torsethaugen, simplified', () => {
     expectRelative(above[0].heightM, 3, 1e-9, 'H1');
     expectRelative(above[0].peakEnhancement, below[0].peakEnhancement, 1e-7, 'gamma1');
   });
+
+  it('without height is flat, its peak where it is stated', () => {
+    const sea = torsethaugen({ form: 'torsethaugen', significantHeightM: 0, omegaPeakRadPerS: 0.6 }, water);
+    expect(sea.omegaPeak).toBe(0.6);
+    expect(sea.density(0.6)).toBe(0);
+  });
 });
