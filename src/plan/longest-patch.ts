@@ -1,9 +1,12 @@
+import { peakHalfWidth } from '../waves/directional-spectrum.ts';
 import { type RadialTable, radialIntegral, wavevectorDensity } from '../waves/radial-table.ts';
 
 /** Effective number of waves wanted on the longest patch: below 40 single crests are recognised when they return. */
 export const EFFECTIVE_WAVES = 100;
 /** Waves of the peak across the longest patch, at least. */
 const PEAK_WAVES_ACROSS = 5;
+/** Angles on the circle, times the half-width of the spreading in radians, that integrate D^2 to 1e-4. */
+const ANGLES_PER_HALF_WIDTH = 10;
 /** A patch is not lengthened beyond this for the sake of effective waves alone, m. */
 const LONGEST_FOR_WAVES_M = 4000;
 
@@ -44,7 +47,7 @@ export function zeroCellShare(tables: readonly RadialTable[], patchLengthM: numb
 
 /** Integral of Psi^2 over the wavevector plane, m^6: rings of the table times a sum over angle. */
 function squaredDensityIntegral(table: RadialTable): number {
-  const angles = 180;
+  const angles = Math.max(180, Math.ceil(ANGLES_PER_HALF_WIDTH / peakHalfWidth(table.spectrum)));
   const every = 8;
   let sum = 0;
   for (let i = 0; i < table.wavenumber.length; i += every) {

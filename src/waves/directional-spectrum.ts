@@ -61,6 +61,14 @@ export function directionalSpectrum(
   };
 }
 
+/** Angle from the mean direction at which the spreading of the peak has first fallen to a half, rad; at most pi. */
+export function peakHalfWidth(spectrum: DirectionalSpectrum): number {
+  const p = spectrum.spreadingParameter(spectrum.peakWavenumberRadPerM);
+  let theta = 1e-4;
+  while (theta < Math.PI && spectrum.spreadingShape(theta, p) > 0.5) theta *= 1.1;
+  return Math.min(theta, Math.PI);
+}
+
 /** Product of all gains at a wavenumber, squared: what energy is multiplied by. */
 export function energyGain(kRadPerM: number, gains: readonly WavelengthGain[]): number {
   let product = 1;

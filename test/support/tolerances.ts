@@ -58,4 +58,4 @@ export const PARSEVAL = 1e-12;
 export const CELL_SUM = 1e-3;
 
 /** Linear interpolation in a radial table, as a share of the largest tabulated value. */
-export const RADIAL_TABLE = 4e-5;
+export const RADIAL_TABLE = 6e-5;
