@@ -1,11 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { planReport } from '../../../src/cli/plan-report.ts';
 import { expectedMemoryBytes, loadSea, loopSeconds, type Plan, planBake } from '../../../src/index.ts';
-import { tinyCurrentSea, tinyEveryMapSea, tinySea, tinyTwoCascadeSea } from '../../support/tiny-seas.ts';
+import { tinyCurrentSea, tinyEveryMapSea, tinyTwoCascadeSea } from '../../support/tiny-seas.ts';
+import { line, numberAfter, numbersIn, section, THREADS } from './report-text.ts';
 
 // What a report says is compared with the plan it was made from, number by number; how it is laid out is free to change.
-
-const THREADS = 4;
 
 const PLANS: readonly (readonly [string, Plan])[] = [
   ['demo', planBake(loadSea('demo')).plan],
@@ -13,36 +12,8 @@ const PLANS: readonly (readonly [string, Plan])[] = [
   ['mobile-pond', planBake(loadSea('mobile-pond')).plan],
   ['two cascades', planBake(tinyTwoCascadeSea()).plan],
   ['every map', planBake(tinyEveryMapSea({ output: { exrChannels: 'layered', lengthUnit: 'cm' } })).plan],
-  ['current', planBake(tinyCurrentSea()).plan],
+  ['current', planBake(tinyCurrentSea({ shaping: { againstWind: 0.25, horizontalScale: 1.3 } })).plan],
 ];
-
-/** The text under a heading, on one line. */
-function section(plan: Plan, heading: string): string {
-  const parts = planReport(plan, { threads: THREADS }).split(/\n\n(?=\S)/);
-  const part = parts.find((text) => text.startsWith(`${heading}\n`));
-  if (part === undefined) throw new Error(`no section ${heading}`);
-  return part.replaceAll(/\s+/g, ' ');
-}
-
-/** The table row or field that begins with a word, cut where the next begins. */
-function line(plan: Plan, heading: string, start: string): string {
-  const parts = planReport(plan, { threads: THREADS }).split(/\n\n(?=\S)/);
-  const part = parts.find((text) => text.startsWith(`${heading}\n`)) ?? '';
-  const found = part.split('\n').find((text) => text.trimStart().startsWith(start));
-  if (found === undefined) throw new Error(`no line ${start} under ${heading}`);
-  return found;
-}
-
-function numbersIn(text: string): number[] {
-  return [...text.matchAll(/-?\d+(?:\.\d+)?(?:e-?\d+)?/g)].map(([number]) => Number(number));
-}
-
-/** The number that stands behind some words. */
-function numberAfter(text: string, words: string): number {
-  const at = text.indexOf(words);
-  if (at < 0) throw new Error(`"${words}" is not in: ${text}`);
-  return numbersIn(text.slice(at + words.length))[0];
-}
 
 /** Reports round to three digits or more: at most half of the third, which is 0.5 % of 1.00. */
 function expectPrinted(printed: number, value: number): void {
@@ -115,7 +86,12 @@ describe.each(PLANS)('the report on %s', (_name, plan) => {
     expect(numberAfter(text, 'gravity ')).toBe(water.gravityMps2);
     const speed = Math.hypot(current.eastMps, current.northMps);
     if (speed === 0) expect(text).toContain('current none');
-    else expectPrinted(numberAfter(text, 'current '), speed);
+    else {
+      expectPrinted(numberAfter(text, 'current '), speed);
+      const towardRad = numberAfter(text, 'm/s toward ') * (Math.PI / 180);
+      expect(speed * Math.sin(towardRad)).toBeCloseTo(current.eastMps, 2);
+      expect(speed * Math.cos(towardRad)).toBeCloseTo(current.northMps, 2);
+    }
   });
 
   it('shows the shaping', () => {
@@ -241,59 +217,5 @@ describe.each(PLANS)('the report on %s', (_name, plan) => {
     if (warnings.length === 0) expect(text.endsWith('No warnings. ')).toBe(true);
     for (const warning of warnings) expect(text).toContain(`- ${warning}`);
     if (warnings.length > 0) expect(text.trimEnd().endsWith(warnings.at(-1) as string)).toBe(true);
-  });
-});
-
-describe('words of a report', () => {
-  const of = (changes: Record<string, unknown>): Plan => planBake(tinySea(changes)).plan;
-
-  it('tells when a loop is not the length that was asked for', () => {
-    const text = section(of({ loop: { seconds: 2, frameRate: '24000/1001' } }), 'Loop');
-    expect(text).toContain('2.002 s: 48 frames at 24000/1001 (23.976) frames a second');
-    expect(text).toContain('Asked for was 2 s');
-    expect(section(of({ loop: { seconds: 2, frameRate: 24 } }), 'Loop')).not.toContain('Asked for');
-  });
-
-  it('tells of waves too fast for the frames', () => {
-    // At 1 frame a second waves shorter than 2 s run backwards.
-    const plan = of({ loop: { frames: 8, frameRate: 1 } });
-    expect(section(plan, 'Loop')).toContain('would run backwards');
-    expect(section(of({ loop: { frames: 64, frameRate: 8 } }), 'Loop')).toContain('No wave worth mention');
-  });
-
-  it('tells of gaps between bands', () => {
-    const plan = of({
-      cascades: [
-        { patch: 30, resolution: 32, band: { shortest: 8 } },
-        { patch: 6.3, resolution: 32, band: { longest: 1.5 } },
-      ],
-    });
-    expect(plan.report.losses.gaps).toHaveLength(1);
-    expect(section(plan, 'Cascades')).toMatch(/No cascade holds waves between [\d.]+ m and [\d.]+ m\./);
-  });
-
-  it('lists band gains', () => {
-    const bandGains = [{ shortest: '1 m', longest: '3 m', gain: 0.5 }];
-    const text = section(of({ shaping: { bandGains } }), 'Shaping');
-    expect(text).toContain('waves of 1 m to 3 m times 0.5');
-  });
-
-  it('tells the breaking level where that was given', () => {
-    const plan = of({ foam: { breakingLevel: 0.7 } });
-    expect(section(plan, 'Foam')).toContain('falls below the breaking level');
-    expect(line(plan, 'Foam', 'c0')).toContain('0.7');
-  });
-
-  it('signs the channels of y-up files, whether their range is known or will be surveyed', () => {
-    const maps = (range: string): Record<string, unknown> => ({
-      displacement: { format: 'png', bits: 16, range },
-    });
-    for (const range of ['6 sigmas', 'survey']) {
-      const upright = of({ maps: maps(range), output: { axes: 'y-up' }, foam: 'off' });
-      expect(section(upright, 'Maps')).toContain('R east, G up, B -north;');
-      expect(section(of({ maps: maps(range), foam: 'off' }), 'Maps')).toContain('R east, G north, B up;');
-    }
-    const normals = of({ maps: { normal: 'png' }, output: { normalGreen: 'south' }, foam: 'off' });
-    expect(section(normals, 'Maps')).toContain('R east, G -north, B up;');
   });
 });
