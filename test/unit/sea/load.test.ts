@@ -5,6 +5,7 @@ import { afterAll, describe, expect, test } from 'vitest';
 import { InputError, ReadWriteError } from '../../../src/errors.ts';
 import { loadSea, presetNames, presetSummaries, presetText, seaText } from '../../../src/sea/load.ts';
 import { parseSea } from '../../../src/sea/parse.ts';
+import { seaWarnings } from '../../../src/sea/warnings.ts';
 import { TINY_SEA_YAML, tinySea } from '../../support/tiny-seas.ts';
 
 const folder = mkdtempSync(join(tmpdir(), 'loopswell-load-'));
@@ -68,6 +69,7 @@ describe('presets', () => {
       const text = presetText(name);
       expect(text.startsWith('# yaml-language-server: $schema=./sea.schema.json\n# ')).toBe(true);
       expect(parseSea(text)).toEqual(loadSea(name));
+      expect(seaWarnings(loadSea(name))).toEqual([]);
     },
   );
 });

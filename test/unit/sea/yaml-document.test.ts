@@ -19,6 +19,11 @@ describe('texts that are not to be trusted', () => {
   test.each(['__proto__', 'constructor', 'prototype'])('the key %s', (key) => {
     expect(placesOf(`${SOUND}water: { ${key}: { polluted: true } }`)).toEqual([`4:10 water.${key}`]);
     expect(placesOf(`${SOUND}"${key}": 1`)).toEqual([`4:1 ${key}`]);
+    // Refused in the text itself, before any object is made of it.
+    expect(yamlDocument(`a: { ${key}: 1 }`)).toMatchObject({
+      value: undefined,
+      problems: [{ path: `a.${key}` }],
+    });
     expect(({} as Record<string, unknown>).polluted).toBeUndefined();
   });
 
