@@ -197,4 +197,13 @@ describe('wrapped normal', () => {
       expectRelative(1 + moment(spreading, 2), 1 + Math.exp(-2 * sigma ** 2), QUADRATURE, `r2 of ${sigma}`);
     }
   });
+
+  it('both series agree where one takes over from the other', () => {
+    const [images, fourier] = [1.5 * (1 - 1e-12), 1.5].map((standardDeviationRad) =>
+      directionalSpreading({ form: 'wrapped-normal', standardDeviationRad }),
+    );
+    for (const theta of [0, 0.4, 1.7, Math.PI]) {
+      expectRelative(density(images, 1, theta), density(fourier, 1, theta), 1e-11, `D(${theta})`);
+    }
+  });
 });
