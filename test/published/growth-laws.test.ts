@@ -131,6 +131,8 @@ describe('limits', () => {
     expectRelative(sea.significantHeightM, 3.417, 4e-3, 'Hm0');
     expectPrinted(sea.peakPeriodS, '9.0', 'Tp');
     const developed = waveGrowth('shore-protection-manual', { ...conditions, fetchM: Infinity });
+    expectPrinted((developed.significantHeightM * g) / 15 ** 2, '.2433', 'g Hs / U_A^2');
+    expectPrinted((developed.peakPeriodS * g) / 15, '8.134', 'g Tp / U_A');
     const [before, at] = [527e3, 531e3].map((fetchM) =>
       waveGrowth('shore-protection-manual', { ...conditions, fetchM }),
     );
