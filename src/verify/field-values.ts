@@ -1,0 +1,143 @@
+import { LARGEST_CODE, type Plane, type Quantity } from '../image/image.ts';
+import type {
+  ManifestCascade,
+  ManifestChannel,
+  ManifestConventions,
+  ManifestMap,
+} from '../manifest/manifest.ts';
+import { fillFromHalf } from '../math/half.ts';
+import type { SeenFile } from './frame-reader.ts';
+import {
+  meanSquareOfClipping,
+  meanSquareOfCodes,
+  meanSquareOfFloats,
+  meanSquareOfHalves,
+  type Rounding,
+} from './rounding.ts';
+
+/** A quantity over the tile, as a reader of the files gets it, in SI. */
+export interface FieldValues {
+  readonly quantity: Quantity;
+  /** Float64Array N*N, row-major [iy][ix], row 0 in the south; lent until the next frame. */
+  readonly values: Float64Array;
+  readonly rounding: Rounding;
+  readonly channel: ManifestChannel;
+  /** Texels at the lowest or highest code of an integer sample: clipped ones are among them. */
+  readonly extremes: number;
+}
+
+/** Decodes the fields of one frame after another into the same arrays. */
+export interface FieldStore {
+  readonly frame: (files: readonly SeenFile[]) => (quantity: Quantity) => FieldValues | null;
+}
+
+/** SI value of one of the channel's units. */
+export function siPerUnit({ unit }: Pick<ManifestChannel, 'unit'>): number {
+  return unit === 'cm' || unit === 'cm/s' ? 0.01 : 1;
+}
+
+/** @param rowZero which edge the first row of a file holds */
+export function fieldStore(cascade: ManifestCascade, rowZero: ManifestConventions['rowZero']): FieldStore {
+  const { resolution: N } = cascade;
+  const buffers = new Map<Quantity, Float64Array>();
+  return {
+    frame(files) {
+      const made = new Map<Quantity, FieldValues | null>();
+      return (quantity) => {
+        const before = made.get(quantity);
+        if (before !== undefined) return before;
+        const values = buffers.get(quantity) ?? new Float64Array(N * N);
+        const field = decodedField(values, quantity, files, N, rowZero);
+        if (field !== null) buffers.set(quantity, values);
+        made.set(quantity, field);
+        return field;
+      };
+    },
+  };
+}
+
+function decodedField(
+  values: Float64Array,
+  quantity: Quantity,
+  files: readonly SeenFile[],
+  N: number,
+  rowZero: ManifestConventions['rowZero'],
+): FieldValues | null {
+  for (const { planned, image } of files) {
+    const channel = planned.channels.find((candidate) => candidate.quantity === quantity);
+    if (channel === undefined || image === null) continue;
+    const plane = image.planes[image.channels.indexOf(channel.name)];
+    const { extremes, ...rounding } = fillValues(values, plane, planned, channel);
+    if (rowZero === 'north') turnOver(values, N);
+    return { quantity, values, rounding, channel, extremes };
+  }
+  return null;
+}
+
+/** Fills SI values in the order of the file. */
+function fillValues(
+  values: Float64Array,
+  plane: Plane,
+  map: ManifestMap,
+  channel: ManifestChannel,
+): Rounding & { readonly extremes: number } {
+  const { sample, dither: dithered } = map;
+  const si = siPerUnit(channel);
+  const scale = channel.decode.scale * si;
+  const offset = channel.decode.offset * si;
+  const floats = { sample, scale, step: 0, dithered: false, low: -Infinity, high: Infinity, extremes: 0 };
+  if (sample === 'half') {
+    const halves = plane as Uint16Array;
+    fillFromHalf(values, halves);
+    const exponents = new Uint32Array(32);
+    for (let i = 0; i < halves.length; i++) {
+      exponents[(halves[i] >> 10) & 31]++;
+      values[i] = values[i] * scale + offset;
+    }
+    return { ...floats, meanSquare: meanSquareOfHalves(exponents, scale) };
+  }
+  if (sample === 'float') {
+    let squares = 0;
+    for (let i = 0; i < plane.length; i++) {
+      squares += (plane[i] * scale) ** 2;
+      values[i] = plane[i] * scale + offset;
+    }
+    return { ...floats, meanSquare: meanSquareOfFloats(squares / plane.length) };
+  }
+  const largest = LARGEST_CODE[sample];
+  const step = scale / largest;
+  let extremes = 0;
+  for (let i = 0; i < plane.length; i++) {
+    if (plane[i] === 0 || plane[i] === largest) extremes++;
+    values[i] = plane[i] * step + offset;
+  }
+  const size = Math.abs(step);
+  const codes = {
+    sample,
+    scale,
+    step: size,
+    dithered,
+    meanSquare: meanSquareOfCodes(size, dithered),
+    extremes,
+  };
+  if (channel.written.clipped === 0) return { ...codes, low: -Infinity, high: Infinity };
+  const deviation = channel.written.deviation * si;
+  const clipping = meanSquareOfClipping(extremes / plane.length, Math.abs(scale) / 2, deviation * deviation);
+  return {
+    ...codes,
+    low: Math.min(offset, offset + scale),
+    high: Math.max(offset, offset + scale),
+    meanSquare: codes.meanSquare + clipping,
+  };
+}
+
+/** Turns the order of the rows round, in place. */
+function turnOver(values: Float64Array, N: number): void {
+  for (let south = 0, north = N - 1; south < north; south++, north--) {
+    for (let x = 0, a = south * N, b = north * N; x < N; x++, a++, b++) {
+      const value = values[a];
+      values[a] = values[b];
+      values[b] = value;
+    }
+  }
+}
