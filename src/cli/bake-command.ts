@@ -51,7 +51,7 @@ export function defineBakeCommand(command: Command, io: ProgramIo): void {
 }
 
 async function runBake(io: ProgramIo, sea: string, options: BakeCommandOptions): Promise<void> {
-  const { name, planned } = plannedInput(sea);
+  const { name, planned } = plannedInput(io, sea);
   const { plan } = planned;
   const { threads, json = false, quiet = false } = options;
   if (options.dryRun === true) return printPlan(io, plan, { json, threads });

@@ -20,7 +20,7 @@ export function definePlanCommand(command: Command, io: ProgramIo): void {
     .option('--save <file>', 'write the plan to a file that bake takes in place of the sea')
     .addHelpText('after', () => `\n${seaDefaultsHelp()}`)
     .action(async (sea: string, options: PlanCommandOptions) => {
-      const { plan } = plannedInput(sea).planned;
+      const { plan } = plannedInput(io, sea).planned;
       if (options.save !== undefined) {
         savePlan(plan, options.save);
         say(io, `Plan saved to ${options.save}`);

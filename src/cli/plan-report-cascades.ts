@@ -14,7 +14,7 @@ const COLUMNS = [
   numbers('slope', 'share'),
   numbers('waves', 'across'),
   numbers('vertex', 'spacing'),
-  numbers('effective', 'waves'),
+  numbers('waves', 'in all'),
   numbers('', 'repeats'),
   numbers('', 'loop'),
 ];
@@ -29,9 +29,9 @@ export function cascadesSection({ cascades, report }: Plan): Section {
       '',
       ...paragraph(
         'Shares are of the variance of height, and of slope in waves longer than 0.1 m. Waves across are those at the ' +
-          'long end of the band (of c0: the main waves). Vertex spacing is that of a mesh with four vertices on the ' +
-          'shortest wave. Repeats: how much of what the eye sees at the size of the tile comes round with it, ' +
-          '0.10 or less is good; c0 comes round as a whole.',
+          'long end of the band (of c0: the main waves); waves in all, how many carry the tile as effective number. ' +
+          'Vertex spacing is that of a mesh with four vertices on the shortest wave. Repeats: how much of what the ' +
+          'eye sees at the size of the tile comes round with it, 0.10 or less is good; c0 comes round as a whole.',
       ),
       '',
       ...lossLines(report.losses),
@@ -49,10 +49,10 @@ function cascadeRow({ id, patchLengthM, resolution, loop }: PlannedCascade, repo
     percent(report.heightVarianceShare),
     percent(report.slopeVarianceShare),
     rounded(report.wavesAcross),
-    metres(report.vertexSpacingM),
+    metres(report.vertexSpacingM, 2),
     String(Math.round(report.effectiveWaves)),
     report.repetition === null ? 'whole' : report.repetition.toFixed(2),
-    seconds(loopSeconds(loop), 5),
+    seconds(loopSeconds(loop)),
   ];
 }
 

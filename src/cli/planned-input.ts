@@ -7,6 +7,7 @@ import {
   plannedBakeOf,
   seaText,
 } from '../index.ts';
+import { isTerminal, type ProgramIo } from './io.ts';
 
 /** What a command was given to work on: a preset, a sea file or a saved plan. */
 export interface PlannedInput {
@@ -16,14 +17,23 @@ export interface PlannedInput {
 }
 
 /**
- * Reads what the user named and plans it.
+ * Reads what the user named and plans it. A large sea takes seconds: a terminal says so meanwhile.
  *
  * @throws InputError, ReadWriteError
  */
-export function plannedInput(pathOrPreset: string): PlannedInput {
+export function plannedInput(io: ProgramIo, pathOrPreset: string): PlannedInput {
   const { name, source, text } = seaText(pathOrPreset);
-  const planned = isPlanText(text)
-    ? plannedBakeOf(parsePlan(text, source), source)
-    : planBake(parseSea(text, { source }));
-  return { name, planned };
+  const isWatched = isTerminal(io.stderr, io.env);
+  if (isWatched) io.stderr.write(`planning ${name} ...`);
+  try {
+    const planned = isPlanText(text)
+      ? plannedBakeOf(parsePlan(text, source), source)
+      : planBake(parseSea(text, { source }));
+    return { name, planned };
+  } finally {
+    if (isWatched) io.stderr.write(CLEARED_LINE);
+  }
 }
+
+/** Back to the first column and everything behind it erased (ECMA-48: CR, EL). */
+const CLEARED_LINE = '\r\u001b[K';

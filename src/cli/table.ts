@@ -19,7 +19,7 @@ export function numbers(...heading: string[]): Column {
   return { heading, align: 'right' };
 }
 
-/** A table as lines: headings, then one line a row; columns as wide as they need to be. */
+/** A table as lines: headings, then one line a row; columns as wide as they need to be, nearer where room is scarce. */
 export function tableLines(columns: readonly Column[], rows: readonly (readonly string[])[]): string[] {
   const headingHeight = Math.max(...columns.map(({ heading }) => heading.length));
   const headings = Array.from({ length: headingHeight }, (_, line) =>
@@ -27,10 +27,12 @@ export function tableLines(columns: readonly Column[], rows: readonly (readonly 
   );
   const all = [...headings, ...rows];
   const widths = columns.map((_, c) => Math.max(...all.map((row) => row[c].length)));
+  const width = widths.reduce((sum, own) => sum + GAP.length + own, 0);
+  const gap = width > WIDTH ? ' ' : GAP;
   return all.map((row) =>
     row
       .map((cell, c) => (columns[c].align === 'left' ? cell.padEnd(widths[c]) : cell.padStart(widths[c])))
-      .join(GAP)
+      .join(gap)
       .trimEnd(),
   );
 }

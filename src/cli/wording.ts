@@ -32,7 +32,7 @@ export function percent(share: number): string {
   const value = 100 * share;
   const size = Math.abs(value);
   if (size === 0 || size < 1e-12) return '0 %';
-  if (size < 0.01) return 'under 0.01 %';
+  if (size < 0.01) return '<0.01 %';
   return `${rounded(value, size > 90 && size < 100 ? 3 : 2)} %`;
 }
 

@@ -15,7 +15,7 @@ import {
   SEA_WATER_DEFAULTS,
 } from '../../../src/index.ts';
 import { TINY_SEA_YAML } from '../../support/tiny-seas.ts';
-import { inNewFolder, outcomeOf } from './captured-io.ts';
+import { CapturedStream, capturedIo, inNewFolder, outcomeOf } from './captured-io.ts';
 
 const POND: Plan = planBake(loadSea('mobile-pond')).plan;
 
@@ -25,6 +25,13 @@ describe('plan', () => {
     expect(status).toBe(EXIT_STATUS.done);
     expect(stdout).toBe(planReport(POND, { threads: machineThreads() }));
     expect(stderr).toBe('');
+  });
+
+  it('says on a terminal that it is planning, and takes that back', async () => {
+    const io = capturedIo({ stderr: new CapturedStream({ isTTY: true }) });
+    const { stdout, stderr } = await outcomeOf(['plan', 'mobile-pond'], io);
+    expect(stderr).toBe('planning mobile-pond ...\r\u001b[K');
+    expect(stdout).toContain(POND.title);
   });
 
   it('prints the whole plan as JSON, deep water and all', async () => {

@@ -17,6 +17,13 @@ describe('tableLines', () => {
       'c1       9 m  fine',
     ]);
   });
+
+  it('draws columns nearer where they would be wider than a report', () => {
+    const columns = Array.from({ length: 10 }, () => words('h'));
+    const width = (cell: string): number => tableLines(columns, [columns.map(() => cell)])[1].length;
+    expect(width('x'.repeat(8))).toBe(98);
+    expect(width('x'.repeat(9))).toBe(99);
+  });
 });
 
 describe('fieldLines', () => {

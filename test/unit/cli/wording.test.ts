@@ -28,8 +28,8 @@ describe('numbers in words', () => {
   it.each([
     [0, '0 %'],
     [5e-220, '0 %'],
-    [0.00005, 'under 0.01 %'],
-    [-0.00005, 'under 0.01 %'],
+    [0.00005, '<0.01 %'],
+    [-0.00005, '<0.01 %'],
     [0.0123, '1.2 %'],
     [-0.0123, '-1.2 %'],
     [0.43, '43 %'],
@@ -83,7 +83,7 @@ describe('numbers in words', () => {
 
 describe('wrapped', () => {
   it('breaks between words, and never between a number and its unit', () => {
-    expect(wrapped('a patch of 66.2 m and 256 texels', 13)).toEqual([
+    expect(wrapped('a patch of 66.2 m and 256 texels', 15)).toEqual([
       'a patch of',
       '66.2 m and',
       '256 texels',
