@@ -175,17 +175,22 @@ function manifestCascade(
       slopeVariance: cascade.deviations.slopeEast ** 2 + cascade.deviations.slopeNorth ** 2,
       compression: cascade.deviations.compression,
     },
-    foam: level === null ? null : manifestFoam(cascade, level),
+    foam: level === null ? null : manifestFoam(cascade, level, maps.foam),
     maps,
   };
 }
 
-function manifestFoam(cascade: PlannedCascade, level: FoamLevel): ManifestFoam | null {
+function manifestFoam(
+  cascade: PlannedCascade,
+  level: FoamLevel,
+  written: ManifestMap | undefined,
+): ManifestFoam | null {
   const { foam } = cascade;
   if (foam === null) return null;
   return {
     share: foam.share,
-    coverage: { target: foam.coverage, measured: level.coverage },
+    // The level was solved on 16-bit codes; half floats hold a little more or less.
+    coverage: { target: foam.coverage, measured: written?.channels[0].written.mean ?? level.coverage },
     note: level.note,
     breakingJ: level.breakingJ,
     rampJ: foam.rampJ,

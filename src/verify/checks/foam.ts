@@ -1,4 +1,5 @@
 import type { ManifestFoam } from '../../manifest/manifest.ts';
+import { JACOBIAN_RANGE_SIGMAS } from '../../plan/encodings.ts';
 import type { CascadeFacts } from '../cascade-facts.ts';
 import type { CascadeInspection, Check } from '../check.ts';
 import type { FieldValues } from '../field-values.ts';
@@ -28,6 +29,9 @@ export const FOAM: Check = {
     };
   },
 };
+
+/** Span of the J codes in deviations of the compression. */
+const JACOBIAN_SPAN_SIGMAS = JACOBIAN_RANGE_SIGMAS.below + JACOBIAN_RANGE_SIGMAS.above;
 
 /** The target is met within this, or the manifest says why not. */
 const COVERAGE_PERCENT = 2;
@@ -65,7 +69,11 @@ function foamInspection(facts: CascadeFacts, foam: ManifestFoam, residue: string
       for (let i = 0; i < predicted.length; i++) {
         predicted[i] = Math.max(law.fresh(J.values[i]), law.faded(before[i]));
       }
-      source.add(field, predicted, foamError(field, J.errorSquare, law));
+      source.add(
+        field,
+        predicted,
+        foamError(field, J.errorSquare, law, facts.cascade.statistics.compression),
+      );
     },
     verdicts() {
       if (texels === 0) return [notApplicable('no foam map was there to be read')];
@@ -153,11 +161,20 @@ function coverageVerdict({ coverage: { target }, note }: ManifestFoam, covered: 
   );
 }
 
-/** Mean square error of predicted foam: that of J where the source is steep, and the rounding of the frame before. */
-function foamError(field: FieldValues, jacobianError: number | Float64Array, law: FoamLaw): Float64Array {
+/**
+ * Mean square error of predicted foam: that of J where the source is steep, that of the 16-bit codes in which J is kept
+ * between frames and foam, and the rounding of the frame before.
+ */
+function foamError(
+  field: FieldValues,
+  jacobianError: number | Float64Array,
+  law: FoamLaw,
+  compression: number,
+): Float64Array {
+  const codes = (JACOBIAN_SPAN_SIGMAS * compression) / 65535;
   return Float64Array.from(field.values, (_, i) => {
     const square = typeof jacobianError === 'number' ? jacobianError : jacobianError[i];
-    return square * law.steepness ** 2 + field.rounding.meanSquare;
+    return (square + (codes * codes) / 12) * law.steepness ** 2 + field.rounding.meanSquare;
   });
 }
 
