@@ -181,7 +181,7 @@ describe('statuses of bake', () => {
       expect(status).toBe(EXIT_STATUS.badInput);
       expect(stderr).toContain('2 problems');
       expect(stderr).toContain(`${sea}:7:24: systems[0].significantHeight:`);
-      expect(stderr).toContain(`${sea}:12:17: cascades[0].resolution:`);
+      expect(stderr).toContain(`${sea}:13:17: cascades[0].resolution:`);
     });
   });
 
