@@ -1,10 +1,23 @@
 // The public API, by name. The command line uses nothing else.
 
-export { BAKE_DEFAULTS, bake } from './bake/bake.ts';
+export { bake } from './bake/bake.ts';
+export { gather } from './bake/gather.ts';
 export { machineThreads } from './bake/machine.ts';
-export type { BakeOptions, BakeProgress, BakeResult, BakeStage } from './bake/options.ts';
+export {
+  BAKE_DEFAULTS,
+  type BakeOptions,
+  type BakeProgress,
+  type BakeResult,
+  type BakeStage,
+  type FrameRange,
+  type GatherOptions,
+  type Part,
+  type RunOptions,
+  type SyncPolicy,
+} from './bake/options.ts';
 export { expectedMemoryBytes } from './bake/resources.ts';
 export type { RunReport } from './bake/run-report.ts';
+export { surveyedBake } from './bake/survey.ts';
 export {
   CannotCreateError,
   EXIT_STATUS,

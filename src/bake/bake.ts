@@ -1,32 +1,42 @@
 import { resolve } from 'node:path';
 import type { Manifest } from '../manifest/manifest.ts';
-import { manifestText } from '../manifest/manifest-text.ts';
 import type { PlannedBake } from '../plan/plan-bake.ts';
-import { writeFileAtomic } from '../store/atomic-file.ts';
-import { openJournal } from '../store/journal.ts';
-import type { Crew } from './crew.ts';
-import { finishedWork, isIntact } from './finished-work.ts';
-import { makeFoam } from './foam-stage.ts';
+import { requireFolderPlace } from '../store/bake-folder.ts';
+import { concluded, type Run, unlessFinishedElsewhere } from './conclusion.ts';
+import { type Crew, withCrew } from './crew.ts';
+import { finishBake } from './finish.ts';
+import { takeStock } from './finished-work.ts';
 import { makeFrames, requireFrameRange } from './frame-stage.ts';
-import { gatheredManifest } from './gather.ts';
-import { inlineExecutor } from './inline-executor.ts';
-import type { Executor } from './jobs.ts';
-import type { JournalEntry } from './journal-entry.ts';
-import { machineName, machineThreads } from './machine.ts';
-import type { BakeOptions, BakeResult } from './options.ts';
+import type { FrameId } from './jobs.ts';
+import { type BakeOptions, type BakeResult, requirePart, threadCount } from './options.ts';
+import { damagedFiles, repaired, repairOf } from './repair.ts';
 import { requireResources } from './resources.ts';
 import { runTally } from './run-report.ts';
-import { surveyedRules } from './survey.ts';
-import { threadExecutor } from './thread-executor.ts';
-import { clearWorkFolder, MANIFEST_PATH, RUN_PATH, takeUpFolder, WORK_FOLDER } from './work-folder.ts';
-
-/** Defaults of a bake's options; `threads: null` is as many as the machine can run at once. */
-export const BAKE_DEFAULTS: Readonly<{ threads: number | null; keepScratch: boolean; force: boolean }> =
-  Object.freeze({ threads: null, keepScratch: false, force: false });
+import { wantedFrames } from './shard.ts';
+import {
+  type DecodeRules,
+  needsSurvey,
+  rulesOfManifest,
+  rulesOfPlan,
+  surveyed,
+  withRules,
+} from './survey.ts';
+import { type Told, toldOf } from './told.ts';
+import {
+  claimFolder,
+  isForeign,
+  journalsIn,
+  type Owner,
+  ownerOf,
+  planIn,
+  refuseForeign,
+  removeBake,
+} from './work-folder.ts';
 
 /**
- * Bakes a plan into a folder: frames, then foam, then the manifest. Takes up where an earlier run of the same plan
- * stopped; the files are the same bytes with any number of threads.
+ * Bakes a plan into a folder: frames, then foam, then the manifest. Takes up where earlier runs of the same plan
+ * stopped; the files are the same bytes with any number of threads and processes. A finished bake is checked, and what
+ * is damaged in it made again.
  *
  * @param planned the plan and its waves
  * @param folder bake folder, made where missing
@@ -38,71 +48,125 @@ export async function bake(
   folder: string,
   options: BakeOptions = {},
 ): Promise<BakeResult> {
-  const { plan } = planned;
-  const root = resolve(folder);
-  const range = options.frames ?? null;
-  const threads = options.threads ?? BAKE_DEFAULTS.threads ?? machineThreads();
-  requireFrameRange(plan, range);
-
-  const tally = runTally();
-  const found = takeUpFolder(root, plan, options.force ?? BAKE_DEFAULTS.force);
-  const { manifest } = found;
-  if (manifest?.files.every((file) => isIntact(root, file)) === true) {
-    tally.reuse(plan.cascades.reduce((sum, { loop }) => sum + loop.frameCount, 0));
-    return { folder: root, manifest, run: tally.report(plan.hash, threads) };
-  }
-  const finished = finishedWork(root, found.entries);
-  const kept = finished.entries();
-  tally.reuse(kept.filter(({ kind }) => kind === 'frame').length);
-  const keptBytes = kept.flatMap(({ files }) => files).reduce((sum, { bytes }) => sum + bytes, 0);
-  requireResources(plan, root, Math.max(1, threads), keptBytes);
-  tally.phase('start');
-
-  const executor = executorOf(planned, root, threads);
-  const journalName = `${machineName()}-${process.pid}-${crypto.randomUUID()}`;
-  const journal = openJournal<JournalEntry>(`${root}/${WORK_FOLDER}`, journalName);
-  const crew: Crew = {
-    plan,
-    folder: root,
-    executor,
-    finished,
-    signal: options.signal ?? null,
-    report: (stage, done, total) => options.onProgress?.({ stage, done, total }),
-    keep(results) {
-      for (const result of results) {
-        const { seconds: _seconds, ...entry } = result;
-        journal.append(entry);
-        finished.add(entry);
-        tally.add(result);
-      }
-    },
+  const run: BakeRun = {
+    root: resolve(folder),
+    threads: threadCount(options.threads),
+    options,
+    tally: runTally(),
   };
-  let gathered: Manifest | null = null;
-  try {
-    const rules = await surveyedRules(crew);
-    tally.phase('survey');
-    await makeFrames(crew, rules, range);
-    tally.phase('frames');
-    if (range === null) {
-      const levels = await makeFoam(crew);
-      tally.phase('foam');
-      gathered = gatheredManifest(plan, finished.entries(), levels, rules);
-    }
-  } finally {
-    journal.close();
-    await executor.close();
+  requireFrameRange(planned.plan, options.frames ?? null);
+  requirePart(options.shard, 'a shard');
+  requireFolderPlace(run.root);
+  const owner = ownerOf(run.root);
+  const { plan, waves } = await withKnownRanges(planned, owner, run);
+  if (isForeign(owner, plan) && options.force !== true) refuseForeign(run.root, owner);
+
+  const found = owner?.planHash === plan.hash ? owner.manifest : null;
+  const damaged = found === null ? [] : await damagedFiles(run.root, found, options);
+  if (found !== null && damaged.length === 0) {
+    run.tally.reuse(wantedFrames(plan, null, null).length);
+    return concluded(found, plan.hash, run);
   }
-  if (gathered === null) return { folder: root, manifest: null, run: tally.report(plan.hash, threads) };
-  writeFileAtomic(root, MANIFEST_PATH, manifestText(gathered), { sync: true });
-  tally.phase('gather');
-  const run = tally.report(plan.hash, threads);
-  writeFileAtomic(root, RUN_PATH, `${JSON.stringify(run, null, 2)}\n`);
-  if (!(options.keepScratch ?? BAKE_DEFAULTS.keepScratch)) clearWorkFolder(root);
-  return { folder: root, manifest: gathered, run };
+  const amplitudes = waves.map((cascade) => cascade.amplitudes);
+  const start = { ...run, plan, waves: amplitudes, folder: run.root };
+  const manifest =
+    found === null
+      ? await unlessFinishedElsewhere(run.root, plan.hash, () =>
+          withCrew(start, (crew) => freshManifest(crew, owner, run)),
+        )
+      : await withCrew(start, (crew) => repairedManifest(crew, found, damaged, run));
+  return concluded(manifest, plan.hash, run);
 }
 
-function executorOf({ plan, waves }: PlannedBake, folder: string, threads: number): Executor {
-  const amplitudes = waves.map((cascade) => cascade.amplitudes);
-  if (threads === 0) return inlineExecutor(plan, amplitudes, folder);
-  return threadExecutor({ plan, waves: amplitudes, folder }, threads);
+/** A call of `bake`. */
+type BakeRun = Run & { readonly options: BakeOptions };
+
+/** The bake with its ranges known: from an earlier run's plan or manifest, else by a survey. */
+async function withKnownRanges(
+  planned: PlannedBake,
+  owner: Owner | null,
+  { root, threads, options, tally }: BakeRun,
+): Promise<PlannedBake> {
+  if (!needsSurvey(planned.plan)) return planned;
+  if (owner !== null) {
+    const plan = withRules(planned.plan, rulesIn(root, owner));
+    if (plan.hash === owner.planHash) return { ...planned, plan };
+    if (options.force !== true) refuseForeign(root, owner);
+  }
+  return surveyed(planned, threads, options, tally);
+}
+
+function rulesIn(root: string, { manifest }: Owner): readonly DecodeRules[] {
+  if (manifest !== null) return rulesOfManifest(manifest);
+  const plan = planIn(root);
+  return plan === null ? [] : rulesOfPlan(plan);
+}
+
+/** Makes what is missing; null where only a part was asked for. */
+async function freshManifest(crew: Crew, owner: Owner | null, run: BakeRun): Promise<Manifest | null> {
+  const { frames = null, shard = null } = run.options;
+  const foreign = isForeign(owner, crew.plan) ? owner : null;
+  const partial = frames !== null || shard !== null;
+  const wanted = wantedFrames(crew.plan, frames, shard);
+  const told = foreign === null ? await resumed(crew, wanted, !partial, run) : NOTHING_TOLD;
+  await begin(crew, wanted, taskName(run.options), run, foreign);
+  await makeFrames(crew, wanted);
+  run.tally.phase('frames');
+  return partial ? null : finishBake(crew, told.levels, run.tally);
+}
+
+async function repairedManifest(
+  crew: Crew,
+  found: Manifest,
+  damaged: readonly string[],
+  run: BakeRun,
+): Promise<Manifest> {
+  const repair = repairOf(crew, damaged);
+  await resumed(crew, repair.frames, false, run);
+  await begin(crew, repair.frames, 'repair', run, null);
+  return repaired(crew, found, repair, damaged);
+}
+
+const NOTHING_TOLD: Told = Object.freeze({ frames: [], levels: [], notices: [] });
+
+/** Takes up the wanted frames, and foam if that is wanted, as far as earlier runs have made them. */
+async function resumed(
+  crew: Crew,
+  wanted: readonly FrameId[],
+  withFoam: boolean,
+  { options, tally }: BakeRun,
+): Promise<Told> {
+  const told = toldOf(crew.plan, journalsIn(crew.folder));
+  for (const notice of told.notices) options.onNotice?.(notice);
+  const keys = new Set(wanted.map(({ cascade, frame }) => `${cascade} ${frame}`));
+  await takeStock(
+    crew,
+    told.frames.filter(({ kind, cascade, frame }) =>
+      kind === 'foam' ? withFoam : keys.has(`${cascade} ${frame}`),
+    ),
+  );
+  tally.reuse(wanted.filter((id) => crew.finished.has('frame', id)).length);
+  return told;
+}
+
+/** Makes sure that there is room, takes the folder, and says so in the journal. */
+async function begin(
+  crew: Crew,
+  wanted: readonly FrameId[],
+  task: string,
+  { root, threads, tally }: BakeRun,
+  foreign: Owner | null,
+): Promise<void> {
+  const missing = wanted.filter((id) => !crew.finished.has('frame', id));
+  requireResources(crew.plan, root, Math.max(1, threads), missing);
+  if (foreign !== null) removeBake(root, foreign);
+  claimFolder(root, crew.plan);
+  crew.begin(task);
+  tally.phase('start');
+}
+
+function taskName({ frames = null, shard = null }: BakeOptions): string {
+  const range = frames === null ? [] : [`frames ${frames.first}-${frames.last}`];
+  const part = shard === null ? [] : [`shard ${shard.index}/${shard.count}`];
+  return [...range, ...part].join(', ') || 'bake';
 }

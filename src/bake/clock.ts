@@ -7,3 +7,8 @@ export function secondsNow(): number {
 export function dateNow(): string {
   return new Date().toISOString();
 }
+
+/** Lets what waits in this thread, signals and timers too, have its turn. */
+export function otherTurns(): Promise<void> {
+  return new Promise((resolve) => setImmediate(resolve));
+}

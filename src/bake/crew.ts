@@ -1,11 +1,20 @@
-import pLimit from 'p-limit';
 import { StoppedError } from '../errors.ts';
 import type { Plan } from '../plan/plan.ts';
-import type { FinishedWork } from './finished-work.ts';
-import type { Executor, FrameResult, Job } from './jobs.ts';
-import type { BakeStage } from './options.ts';
+import { newJournal } from '../store/journal.ts';
+import { removeOwnTemporaries } from '../store/temporaries.ts';
+import { journalName, THIS_PROCESS } from '../store/temporary-name.ts';
+import type { WaveAmplitudes } from '../waves/wave-amplitudes.ts';
+import { type FinishedWork, finishedWork } from './finished-work.ts';
+import { inlineExecutor } from './inline-executor.ts';
+import type { Executor, FrameResult } from './jobs.ts';
+import type { Begin, End, JournalLine, LevelEntry } from './journal-entry.ts';
+import type { BakeStage, RunOptions } from './options.ts';
+import { WORK_FOLDER } from './paths.ts';
+import { throwIfStopped } from './run-jobs.ts';
+import type { RunTally } from './run-report.ts';
+import { threadExecutor } from './thread-executor.ts';
 
-/** What the stages of a bake share. */
+/** What the stages of a run share. */
 export interface Crew {
   readonly plan: Plan;
   /** Absolute path of the bake folder. */
@@ -14,44 +23,88 @@ export interface Crew {
   readonly finished: FinishedWork;
   readonly signal: AbortSignal | null;
   readonly report: (stage: BakeStage, done: number, total: number) => void;
-  /** Writes finished frames down. */
-  readonly keep: (results: readonly FrameResult[]) => void;
+  /** Writes a finished frame down. */
+  readonly keep: (result: FrameResult) => void;
+  /** Writes down that work begins: nothing is written into the folder before. */
+  readonly begin: (task: string) => void;
+  /** Writes a breaking level down. */
+  readonly note: (line: LevelEntry) => void;
 }
 
-/** Jobs handed out at once for each thread: one being done and one waiting, so that no thread idles. */
-const JOBS_PER_THREAD = 2;
+export interface CrewStart {
+  readonly plan: Plan;
+  /** None where no frames are made. */
+  readonly waves: readonly WaveAmplitudes[];
+  readonly folder: string;
+  readonly threads: number;
+  readonly options: RunOptions;
+  readonly tally: RunTally;
+}
 
 /**
- * Has jobs done, a bounded number at a time. After a failure or a stop no further job is begun; those in flight finish
- * and are kept.
- *
- * @throws the first job's error; StoppedError after the crew's signal
+ * Lets `work` have threads and a journal, and puts everything away afterwards, however it ended: no thread runs on, no
+ * file is left half written.
  */
-export async function runJobs<R>(
-  crew: Crew,
-  jobs: readonly Job[],
-  keep: (result: R, job: Job) => void,
-): Promise<void> {
-  const limit = pLimit(JOBS_PER_THREAD * crew.executor.width);
-  let failure: unknown = null;
-  const runOne = async (job: Job): Promise<void> => {
-    if (failure !== null || crew.signal?.aborted === true) return;
-    try {
-      keep((await crew.executor.run(job)) as R, job);
-    } catch (error) {
-      failure ??= error;
-    }
+export async function withCrew<T>(start: CrewStart, work: (crew: Crew) => Promise<T>): Promise<T> {
+  const { plan, folder, options, tally } = start;
+  const executor = executorOf(start);
+  const journal = newJournal<JournalLine>(`${folder}/${WORK_FOLDER}`, journalName());
+  const append = (line: Begin | LevelEntry | End): void => journal.append({ plan: plan.hash, ...line });
+  let begun = false;
+  const signal = options.signal ?? null;
+  const crew: Crew = {
+    plan,
+    folder,
+    executor,
+    finished: finishedWork(),
+    signal,
+    report: (stage, done, total) => options.onProgress?.({ stage, done, total }),
+    keep(result) {
+      const { seconds: _seconds, ...entry } = result;
+      journal.append({ plan: plan.hash, ...entry });
+      crew.finished.add(entry);
+      tally.add(result);
+    },
+    begin(task) {
+      begun = true;
+      append({ kind: 'begin', task, ...THIS_PROCESS });
+    },
+    note: append,
   };
-  await Promise.all(jobs.map((job) => limit(runOne, job)));
-  if (failure !== null) throw failure;
-  throwIfStopped(crew);
+  const end = (outcome: End['outcome']): void => {
+    if (begun) append({ kind: 'end', outcome });
+  };
+  const stop = (): void => executor.stop();
+  signal?.addEventListener('abort', stop);
+  if (signal?.aborted === true) stop();
+  try {
+    throwIfStopped(signal);
+    const value = await work(crew);
+    await executor.close();
+    end('done');
+    journal.close();
+    return value;
+  } catch (error) {
+    await executor.close();
+    tidyUp(() => end(error instanceof StoppedError ? 'stopped' : 'failed'));
+    tidyUp(journal.close);
+    if (begun) tidyUp(() => removeOwnTemporaries(folder));
+    throw error;
+  } finally {
+    signal?.removeEventListener('abort', stop);
+  }
 }
 
-/** @throws StoppedError if the bake was told to stop */
-export function throwIfStopped({ signal, folder }: Pick<Crew, 'signal' | 'folder'>): void {
-  if (signal?.aborted === true) {
-    throw new StoppedError(
-      `Stopped early; what is finished is kept in ${folder}. Run the same command again to resume.`,
-    );
+/** The run has failed already: that is the error to report. */
+function tidyUp(step: () => void): void {
+  try {
+    step();
+  } catch {
+    // What is left undone here the next run does.
   }
+}
+
+function executorOf({ plan, waves, folder, threads, options }: CrewStart): Executor {
+  const context = { plan, waves, folder, sync: options.sync === 'every-file' };
+  return threads === 0 ? inlineExecutor(context) : threadExecutor(context, threads);
 }

@@ -1,60 +1,90 @@
-import { type Crew, runJobs, throwIfStopped } from './crew.ts';
+import type { Crew } from './crew.ts';
 import { type FoamLevel, foamLevel } from './foam-level.ts';
-import type { FoamJob, FrameResult } from './jobs.ts';
+import type { FoamJob, FrameId } from './jobs.ts';
+import type { LevelEntry } from './journal-entry.ts';
+import type { Part } from './options.ts';
+import { runJobs } from './run-jobs.ts';
+import { foamRun } from './shard.ts';
 
 /**
- * Makes the foam of every cascade that has any, once all its frames are there.
+ * Finds the breaking level of every cascade that foams, once all its frames are there. What an earlier run found is
+ * taken over: a level follows from the frames alone.
  *
- * @returns the breaking level of each cascade; null where it has no foam
+ * @returns by cascade; null where it has no foam
  */
-export async function makeFoam(crew: Crew): Promise<readonly (FoamLevel | null)[]> {
+export async function findLevels(
+  crew: Crew,
+  found: readonly LevelEntry[],
+): Promise<readonly (FoamLevel | null)[]> {
   const foaming = crew.plan.cascades.filter(({ foam }) => foam !== null).length;
   // The search takes about ten rounds a cascade; the count is for the progress display only.
   let rounds = 0;
   const onRound = (): void => crew.report('foam-level', ++rounds, Math.max(rounds, 10 * foaming));
-  const levels = await Promise.all(
-    crew.plan.cascades.map(({ foam }, c) =>
-      foam === null
-        ? null
-        : foamLevel(crew.plan, c, crew.executor, () => {
-            throwIfStopped(crew);
-            onRound();
-          }),
-    ),
-  );
-
-  const jobs = levels.flatMap((level, c) => (level === null ? [] : foamJobs(crew, c, level.breakingCode)));
-  const total = crew.plan.cascades.reduce(
-    (sum, { foam, loop }) => sum + (foam === null ? 0 : loop.frameCount),
-    0,
-  );
-  let done = total - jobs.reduce((sum, { fromFrame, toFrame }) => sum + toFrame - fromFrame, 0);
-  await runJobs<readonly FrameResult[]>(crew, jobs, (results) => {
-    crew.keep(results);
-    done += results.length;
-    crew.report('foam', done, total);
-  });
+  const levels: (FoamLevel | null)[] = [];
+  for (const [c, { foam }] of crew.plan.cascades.entries()) {
+    const known = found.find(({ cascade }) => cascade === c);
+    if (foam === null || known !== undefined) {
+      levels.push(foam === null ? null : (known ?? null));
+      continue;
+    }
+    const level = await foamLevel(crew, c, onRound);
+    crew.note({ kind: 'level', cascade: c, ...level });
+    levels.push(level);
+  }
   return levels;
 }
 
 /**
- * Runs of frames that still lack foam, one a thread where possible. Each run is warmed up by a loop of its own, which
- * costs about a fifth of making the frames, so few long runs are best.
+ * Makes the foam frames that are not there yet, of all or of one part.
+ *
+ * @param isLacking whether a frame's foam is to be made
  */
-function foamJobs(
-  { plan, executor, finished }: Crew,
-  cascade: number,
-  breakingCode: number,
-): readonly FoamJob[] {
-  const { frameCount } = plan.cascades[cascade].loop;
-  const length = Math.ceil(frameCount / executor.width);
-  const jobs: FoamJob[] = [];
-  let fromFrame = 0;
-  for (let frame = 0; frame <= frameCount; frame++) {
-    const lacking = frame < frameCount && !finished.has('foam', cascade, frame);
-    if (lacking && frame - fromFrame < length) continue;
-    if (frame > fromFrame) jobs.push({ kind: 'foam', cascade, fromFrame, toFrame: frame, breakingCode });
-    fromFrame = lacking ? frame : frame + 1;
+export async function makeFoam(
+  crew: Crew,
+  levels: readonly (FoamLevel | null)[],
+  part: Part | null,
+  isLacking: (id: FrameId) => boolean = (id) => !crew.finished.has('foam', id),
+): Promise<void> {
+  const jobs = levels.flatMap((level, cascade) => {
+    if (level === null) return [];
+    const [from, to] = foamRun(crew.plan.cascades[cascade].loop.frameCount, part ?? { index: 1, count: 1 });
+    const lacking = Array.from({ length: to - from }, (_, i) => from + i).filter((frame) =>
+      isLacking({ cascade, frame }),
+    );
+    return foamRuns(lacking, Math.ceil((to - from) / crew.executor.width)).map(
+      ([fromFrame, toFrame]): FoamJob => ({
+        kind: 'foam',
+        cascade,
+        fromFrame,
+        toFrame,
+        breakingCode: level.breakingCode,
+      }),
+    );
+  });
+  const total = jobs.reduce((sum, { fromFrame, toFrame }) => sum + toFrame - fromFrame, 0);
+  let done = 0;
+  const counting: Crew = {
+    ...crew,
+    keep(result) {
+      crew.keep(result);
+      crew.report('foam', ++done, total);
+    },
+  };
+  await runJobs(counting, jobs, () => {});
+}
+
+/**
+ * Runs [from, to) of neighbouring frames, none longer than `longest`. Each run is warmed up by a loop of its own, which
+ * costs about a fifth of making the frames, so few long runs are best.
+ *
+ * @param frames in order
+ */
+function foamRuns(frames: readonly number[], longest: number): readonly (readonly [number, number])[] {
+  const runs: [number, number][] = [];
+  for (const frame of frames) {
+    const run = runs.at(-1);
+    if (run !== undefined && frame === run[1] && run[1] - run[0] < longest) run[1]++;
+    else runs.push([frame, frame + 1]);
   }
-  return jobs;
+  return runs;
 }

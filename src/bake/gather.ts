@@ -1,257 +1,115 @@
-import { InternalError } from '../errors.ts';
-import type { Decode } from '../image/image.ts';
-import type {
-  Manifest,
-  ManifestCascade,
-  ManifestChannel,
-  ManifestFoam,
-  ManifestLoop,
-  ManifestMap,
-  ManifestSystem,
-} from '../manifest/manifest.ts';
-import { readingGuide } from '../manifest/reading.ts';
-import type { ChannelStatistics } from '../maps/encoded-map.ts';
-import type { Plan, PlannedCascade, PlannedMap, PlannedSystem } from '../plan/plan.ts';
-import { loopSeconds } from '../sea/loop-length.ts';
-import type { Loop, MapName } from '../sea/sea.ts';
-import { CAUTION } from '../version.ts';
-import { bandLimits } from '../waves/band.ts';
-import { nyquistWavenumber, wavenumberStep } from '../waves/lattice.ts';
-import { decodedChannels } from './cascade-maker.ts';
-import type { FoamLevel } from './foam-level.ts';
-import type { SurveyedRules } from './jobs.ts';
-import type { JournalEntry } from './journal-entry.ts';
-import { WORK_FOLDER } from './work-folder.ts';
+import { resolve } from 'node:path';
+import { InputError, type InputProblem } from '../errors.ts';
+import type { Manifest } from '../manifest/manifest.ts';
+import type { Plan } from '../plan/plan.ts';
+import { concluded, type Run, unlessFinishedElsewhere } from './conclusion.ts';
+import { type Crew, withCrew } from './crew.ts';
+import { finishBake } from './finish.ts';
+import { takeStock } from './finished-work.ts';
+import { findLevels, makeFoam } from './foam-stage.ts';
+import type { FrameEntry } from './journal-entry.ts';
+import { missingFrames, missingFramesError } from './missing.ts';
+import { type BakeResult, type GatherOptions, type Part, requirePart, threadCount } from './options.ts';
+import { isCodesPath, MANIFEST_PATH, PLAN_PATH } from './paths.ts';
+import { damagedFiles } from './repair.ts';
+import { runTally } from './run-report.ts';
+import { foamRun } from './shard.ts';
+import { needsSurvey } from './survey.ts';
+import { toldOf } from './told.ts';
+import { claimFolder, journalsIn, manifestIn, planIn } from './work-folder.ts';
 
 /**
- * The manifest of a finished bake. Statistics are added in the order of frames, so that they come out the same to the
- * bit however the work was split.
+ * Joins what shards have made to a finished bake: checks that every frame is there, whole and of one plan, makes foam,
+ * and writes the manifest last. A finished bake is only checked.
  *
- * @param entries all frames and foam frames, by cascade, kind and frame
- * @param levels breaking level of each cascade
- * @param rules surveyed decode rules of each cascade
- * @throws InternalError if a frame is missing
+ * @param folder the bake folder
+ * @throws InputError (65) that names what is missing and the command that makes it; ReadWriteError (74), StoppedError
+ *   (75)
  */
-export function gatheredManifest(
-  plan: Plan,
-  entries: readonly JournalEntry[],
-  levels: readonly (FoamLevel | null)[],
-  rules: readonly SurveyedRules[],
-): Manifest {
-  const cascades = plan.cascades.map((cascade, c) => {
-    const own = entries.filter((entry) => entry.cascade === c);
-    requireWhole(cascade, own);
-    return manifestCascade(plan, cascade, own, levels[c], rules[c]);
-  });
-  const variances = cascades.map(measuredVariance);
-  const measured = variances.every((variance) => variance !== null)
-    ? 4 * Math.sqrt(variances.reduce((sum, variance) => sum + variance, 0))
-    : null;
-  const { report } = plan;
-  const names = new Set(plan.cascades.flatMap(({ maps }) => maps.map(({ map }) => map)));
-  return {
-    format: 'loopswell-manifest',
-    version: 1,
-    generator: { ...plan.generator, engine: plan.engine },
-    planHash: plan.hash,
-    title: plan.title,
-    caution: CAUTION,
-    sea: manifestSea(plan),
-    conventions: {
-      axes: plan.output.axes,
-      rowZero: plan.output.rowZero,
-      uvOrigin: 'south-west',
-      sampleLocation: 'texel-centre',
-      uv: 'position / patchLength',
-      normalGreen: plan.output.normalGreen,
-      lengthUnit: plan.output.lengthUnit,
-      colorSpace: 'data',
-    },
-    reading: readingGuide(plan.output, names),
-    loop: manifestLoop(plan.loop),
-    cascades,
-    statistics: {
-      significantHeightM: {
-        target: report.sea.significantHeightM,
-        expected: report.sea.expectedHeightM,
-        measured,
-      },
-    },
-    losses: {
-      notInAnyCascade: report.losses.notInAnyCascade,
-      zeroCells: report.losses.zeroCells,
-      tooFastForFrames: report.losses.tooFastForFrames,
-      slopeVarianceLeftOut: report.losses.slopeVarianceLeftOut,
-      frequencyError: report.loop.frequencyError,
-    },
-    files: entries
-      .flatMap(({ files }) => files)
-      .filter(({ path }) => !path.startsWith(`${WORK_FOLDER}/`))
-      .sort((a, b) => (a.path < b.path ? -1 : 1))
-      .map(({ path, bytes, sha256 }) => ({ path, bytes, sha256 })),
+export async function gather(folder: string, options: GatherOptions = {}): Promise<BakeResult> {
+  const run: Run = {
+    root: resolve(folder),
+    threads: threadCount(options.threads),
+    options,
+    tally: runTally(),
   };
-}
-
-function requireWhole(cascade: PlannedCascade, entries: readonly JournalEntry[]): void {
-  const count = (kind: JournalEntry['kind']): number => entries.filter((entry) => entry.kind === kind).length;
-  const { frameCount } = cascade.loop;
-  if (count('frame') !== frameCount || (cascade.foam !== null && count('foam') !== frameCount)) {
-    throw new InternalError(
-      `${cascade.id} has ${count('frame')} frames and ${count('foam')} of foam, not ${frameCount}`,
-    );
+  requirePart(options.part, 'a part');
+  const found = manifestIn(run.root);
+  if (found !== null) {
+    const damaged = await damagedFiles(run.root, found, options);
+    if (damaged.length > 0) throw damagedError(run.root, damaged);
+    return concluded(found, found.planHash, run);
   }
+  const plan = planIn(run.root);
+  if (plan === null) throw noBakeError(run.root);
+  if (needsSurvey(plan)) throw unresolvedError(run.root);
+  const start = { ...run, plan, waves: [], folder: run.root };
+  const work = (crew: Crew): Promise<Manifest | null> => gathered(crew, run, options);
+  const made = await unlessFinishedElsewhere(run.root, plan.hash, () => withCrew(start, work));
+  return concluded(made, plan.hash, run);
 }
 
-function manifestSea(plan: Plan): Manifest['sea'] {
-  const { water, current, foam } = plan;
-  const { horizontalScale, ...shaping } = plan.shaping;
-  return {
-    seed: plan.seed,
-    water: {
-      depthM: water.depthM === Infinity ? 'deep' : water.depthM,
-      gravityMps2: water.gravityMps2,
-      densityKgpm3: water.densityKgpm3,
-      surfaceTensionNpm: water.surfaceTensionNpm,
-      currentEastMps: current.eastMps,
-      currentNorthMps: current.northMps,
-    },
-    horizontalScale,
-    shaping,
-    foam: foam === null ? null : { by: foam.by, coverage: foam.coverage, residue: foam.residue },
-    systems: plan.systems.map(manifestSystem),
-  };
+async function gathered(
+  crew: Crew,
+  { root, tally }: Run,
+  { part = null, onNotice }: GatherOptions,
+): Promise<Manifest | null> {
+  const { plan, finished } = crew;
+  const told = toldOf(plan, journalsIn(root));
+  for (const notice of told.notices) onNotice?.(notice);
+  await takeStock(crew, part === null ? told.frames : ofPart(plan, told.frames, part));
+  const missing = missingFrames(plan, finished);
+  if (missing.length > 0) throw missingFramesError(plan, root, missing);
+  tally.reuse(finished.entries().filter(({ kind }) => kind === 'frame').length);
+  claimFolder(root, plan);
+  crew.begin(part === null ? 'gather' : `gather part ${part.index}/${part.count}`);
+  tally.phase('start');
+  if (part === null) return finishBake(crew, told.levels, tally);
+  await makeFoam(crew, await findLevels(crew, told.levels), part);
+  tally.phase('foam');
+  return null;
 }
 
-function manifestSystem(system: PlannedSystem): ManifestSystem {
-  return {
-    name: system.name,
-    kind: system.kind,
-    basis: system.basis,
-    fromDeg: (system.fromRad * 180) / Math.PI,
-    towardRad: system.towardRad,
-    windSpeedMps: system.windSpeedMps,
-    significantHeightM: system.significantHeightM,
-    peakPeriodS: system.peakPeriodS,
-    peakWavelengthM: system.peakWavelengthM,
-    againstShare: system.againstShare,
-    spectrum: system.spectrum,
-    spreading: system.spreading,
-  };
-}
-
-function manifestLoop(loop: Loop): ManifestLoop {
-  const { frameRate, frameCount, firstFrame } = loop;
-  return { seconds: loopSeconds(loop), frameRate, frameCount, firstFrame };
-}
-
-function manifestCascade(
-  plan: Plan,
-  cascade: PlannedCascade,
-  entries: readonly JournalEntry[],
-  level: FoamLevel | null,
-  rules: SurveyedRules,
-): ManifestCascade {
-  const maps: Partial<Record<MapName, ManifestMap>> = {};
-  for (const planned of cascade.maps)
-    maps[planned.map] = manifestMap(cascade, planned, entries, rules[planned.map]);
-  const { kMinRadPerM, kMaxRadPerM } = bandLimits(cascade.band);
-  const variance = measuredVariance({ maps });
-  return {
-    id: cascade.id,
-    patchLengthM: cascade.patchLengthM,
-    resolution: cascade.resolution,
-    wavenumberRadPerM: [
-      Math.max(kMinRadPerM, wavenumberStep(cascade)),
-      Math.min(kMaxRadPerM, nyquistWavenumber(cascade)),
-    ],
-    band: cascade.band,
-    loop: manifestLoop({ ...cascade.loop, firstFrame: plan.loop.firstFrame }),
-    amplitudesHash: cascade.amplitudesHash,
-    statistics: {
-      significantHeightM: {
-        expected: 4 * cascade.expectedHeightDeviationM,
-        measured: variance === null ? null : 4 * Math.sqrt(variance),
-      },
-      slopeVariance: cascade.deviations.slopeEast ** 2 + cascade.deviations.slopeNorth ** 2,
-      compression: cascade.deviations.compression,
-    },
-    foam: level === null ? null : manifestFoam(cascade, level, maps.foam),
-    maps,
-  };
-}
-
-function manifestFoam(
-  cascade: PlannedCascade,
-  level: FoamLevel,
-  written: ManifestMap | undefined,
-): ManifestFoam | null {
-  const { foam } = cascade;
-  if (foam === null) return null;
-  return {
-    share: foam.share,
-    // The level was solved on 16-bit codes; half floats hold a little more or less.
-    coverage: { target: foam.coverage, measured: written?.channels[0].written.mean ?? level.coverage },
-    note: level.note,
-    breakingJ: level.breakingJ,
-    rampJ: foam.rampJ,
-    decayTimeS: foam.decayTimeS,
-    loopResidue: foam.loopResidue,
-  };
-}
-
-function manifestMap(
-  cascade: PlannedCascade,
-  planned: PlannedMap,
-  entries: readonly JournalEntry[],
-  surveyed: readonly Decode[] | undefined,
-): ManifestMap {
-  const frames = entries.flatMap(({ statistics }) => {
-    const own = statistics[planned.map];
-    return own === undefined ? [] : [own];
+/** What a part of the foam reads: the codes of all frames, and its own foam; the last gather looks at the rest. */
+function ofPart(plan: Plan, frames: readonly FrameEntry[], part: Part): readonly FrameEntry[] {
+  return frames.flatMap((entry) => {
+    if (entry.kind === 'frame') {
+      return [{ ...entry, files: entry.files.filter(({ path }) => isCodesPath(path)) }];
+    }
+    const [from, to] = foamRun(plan.cascades[entry.cascade].loop.frameCount, part);
+    return entry.frame >= from && entry.frame < to ? [entry] : [];
   });
-  const texels = cascade.resolution ** 2 * frames.length;
-  const channels = decodedChannels(planned, surveyed).map(
-    ({ name, quantity, unit, decode }, c): ManifestChannel => ({
-      name,
-      quantity,
-      unit,
-      decode: { scale: decode.scale, offset: decode.offset },
-      written: writtenFigures(
-        frames.map((frame) => frame[c]),
-        texels,
-      ),
-    }),
-  );
-  return {
-    pattern: planned.pattern,
-    format: planned.format,
-    sample: planned.sample,
-    combine: planned.combine,
-    dither: planned.dither,
-    range: planned.range.policy,
-    channels,
-  };
 }
 
-function writtenFigures(frames: readonly ChannelStatistics[], texels: number): ManifestChannel['written'] {
-  let [min, max, sum, sumOfSquares, clipped] = [Infinity, -Infinity, 0, 0, 0];
-  for (const frame of frames) {
-    min = Math.min(min, frame.min);
-    max = Math.max(max, frame.max);
-    sum += frame.sum;
-    sumOfSquares += frame.sumOfSquares;
-    clipped += frame.clipped;
-  }
-  const mean = sum / texels;
-  return { min, max, mean, deviation: Math.sqrt(Math.max(0, sumOfSquares / texels - mean * mean)), clipped };
+function folderError(
+  folder: string,
+  problem: Pick<InputProblem, 'expected' | 'found' | 'remedy'>,
+): InputError {
+  return new InputError(folder, [{ path: '', line: 0, column: 0, ...problem }]);
 }
 
-/** Variance of the height as written, m^2, from whichever map holds it; null where none does. */
-function measuredVariance({ maps }: Pick<ManifestCascade, 'maps'>): number | null {
-  const channel = [maps.displacement, maps.height]
-    .flatMap((map) => map?.channels ?? [])
-    .find(({ quantity }) => quantity === 'displacement-up' || quantity === 'height');
-  if (channel === undefined) return null;
-  const metres = channel.unit === 'cm' ? 0.01 : 1;
-  return (channel.written.deviation * metres) ** 2;
+function noBakeError(folder: string): InputError {
+  return folderError(folder, {
+    expected: 'the folder of a bake',
+    found: `neither ${MANIFEST_PATH} nor ${PLAN_PATH}`,
+    remedy: 'Give the folder that the shards were baked into.',
+  });
+}
+
+function unresolvedError(folder: string): InputError {
+  return folderError(folder, {
+    expected: `all ranges known in ${PLAN_PATH}`,
+    found: 'a range that is still to be surveyed',
+    remedy: 'The plan was not written by a bake: plan the sea anew and bake it.',
+  });
+}
+
+function damagedError(folder: string, damaged: readonly string[]): InputError {
+  const more = damaged.length > 3 ? ` and ${damaged.length - 3} more` : '';
+  return folderError(folder, {
+    expected: 'the files that its manifest names',
+    found: `${damaged.length} missing or damaged: ${damaged.slice(0, 3).join(', ')}${more}`,
+    remedy:
+      'Run the bake of its sea or saved plan again with the same folder: it makes only what is damaged.',
+  });
 }

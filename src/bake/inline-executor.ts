@@ -1,23 +1,30 @@
-import { InternalError, LoopswellError } from '../errors.ts';
-import type { Plan } from '../plan/plan.ts';
-import type { WaveAmplitudes } from '../waves/wave-amplitudes.ts';
-import { jobRunner } from './job-runner.ts';
-import { type Executor, jobName } from './jobs.ts';
+import { otherTurns } from './clock.ts';
+import { droppedJob, jobError, jobFailure } from './job-failure.ts';
+import { type JobContext, jobRunner } from './job-runner.ts';
+import type { Executor } from './jobs.ts';
 
 /** Runs jobs in the calling thread, one after the other: for tests and for embedding where threads are not wanted. */
-export function inlineExecutor(plan: Plan, waves: readonly WaveAmplitudes[], folder: string): Executor {
-  const runJob = jobRunner(plan, waves, folder);
+export function inlineExecutor(context: JobContext): Executor {
+  const runJob = jobRunner(context);
+  let stopped = false;
   return {
     width: 1,
-    async run(job) {
+    async run(job, keep) {
       try {
-        return runJob(job);
+        const steps = runJob(job);
+        for (;;) {
+          await otherTurns();
+          if (stopped) throw droppedJob();
+          const step = steps.next();
+          if (step.done === true) return step.value;
+          keep(step.value);
+        }
       } catch (error) {
-        const text = `${jobName(job, plan.loop.firstFrame)}: ${(error as Error).message}`;
-        if (error instanceof LoopswellError)
-          throw new LoopswellError(text, error.exitStatus, { cause: error });
-        throw new InternalError(text, { cause: error });
+        throw jobError(job, context.plan, jobFailure(error));
       }
+    },
+    stop() {
+      stopped = true;
     },
     async close() {},
   };

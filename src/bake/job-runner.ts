@@ -4,6 +4,7 @@ import { isSurveyed } from '../plan/encodings.ts';
 import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
 import type { MapName } from '../sea/sea.ts';
 import { writeFileAtomic } from '../store/atomic-file.ts';
+import { isIntact } from '../store/bake-folder.ts';
 import { fillFromFiles } from '../store/scratch.ts';
 import type { WaveAmplitudes } from '../waves/wave-amplitudes.ts';
 import { type CascadeMaker, cascadeMaker, encodedFile } from './cascade-maker.ts';
@@ -18,44 +19,58 @@ import type {
   JobResult,
   Stage,
   SurveyJob,
-  SurveyResult,
   WrittenFile,
 } from './jobs.ts';
-import { codesPath } from './work-folder.ts';
+import { codesPath } from './paths.ts';
+
+/** What jobs are done with. */
+export interface JobContext {
+  readonly plan: Plan;
+  /** Wave amplitudes in the order of the plan's cascades, read only; none where no frames are made. */
+  readonly waves: readonly WaveAmplitudes[];
+  /** The bake folder, absolute; its cascades' folders are there. */
+  readonly folder: string;
+  /** Wait for the disk after every file. */
+  readonly sync: boolean;
+}
 
 /**
  * Does jobs of one bake in the calling thread. Buffers of a cascade are made when its first job comes and kept.
  *
- * @param plan the plan
- * @param waves wave amplitudes in the order of the plan's cascades; read only
- * @param folder the bake folder, absolute
+ * @returns what does a job: it yields every frame whose files are in place, so that whoever drives it can write that
+ *   down, and stop between two
  */
-export function jobRunner(
-  plan: Plan,
-  waves: readonly WaveAmplitudes[],
-  folder: string,
-): (job: Job) => JobResult {
+export function jobRunner(context: JobContext): (job: Job) => Generator<FrameResult, JobResult> {
+  const { plan, waves, folder } = context;
   const makers = new Map<number, CascadeMaker>();
   const maker = (c: number): CascadeMaker => {
     const made = makers.get(c) ?? cascadeMaker(plan, plan.cascades[c], waves[c]);
     makers.set(c, made);
     return made;
   };
-  return (job) => {
+  return function* done(job) {
     switch (job.kind) {
       case 'frame':
-        return [frameResult(job, plan, maker(job.cascade), folder)];
+        yield frameResult(job, context, maker(job.cascade));
+        return null;
       case 'survey':
         return surveyResult(job, plan.cascades[job.cascade], maker(job.cascade));
       case 'foam-measure':
         return foamMeasure(job, plan, folder);
       case 'foam':
-        return foamResults(job, plan, folder);
+        yield* foamResults(job, context);
+        return null;
+      case 'check':
+        return {
+          kind: 'check',
+          intact: job.groups.map((files) => files.every((file) => isIntact(folder, file))),
+        };
     }
   };
 }
 
-function frameResult(job: FrameJob, plan: Plan, maker: CascadeMaker, folder: string): FrameResult {
+function frameResult(job: FrameJob, context: JobContext, maker: CascadeMaker): FrameResult {
+  const { plan } = context;
   const cascade = plan.cascades[job.cascade];
   const files: WrittenFile[] = [];
   const statistics: Partial<Record<MapName, readonly ChannelStatistics[]>> = {};
@@ -64,25 +79,25 @@ function frameResult(job: FrameJob, plan: Plan, maker: CascadeMaker, folder: str
   timer.lap('synthesis');
   for (const planned of cascade.maps) {
     if (planned.map === 'foam') continue;
-    const made = maker.map(planned, fields, job.surveyed[planned.map]);
+    const made = maker.map(planned, fields, undefined);
     statistics[planned.map] = made.statistics;
     timer.lap('maps');
     const { path, bytes } = encodedFile(plan, cascade, planned, made.image, job.frame);
     timer.lap('encode');
-    files.push(written(folder, path, bytes));
+    files.push(written(context, path, bytes));
     timer.lap('write');
   }
   if (cascade.foam !== null) {
     const codes = maker.jacobianCodes(fields, cascade.foam);
     timer.lap('maps');
     const bytes = new Uint8Array(codes.buffer, codes.byteOffset, codes.byteLength);
-    files.push(written(folder, codesPath(cascade.id, job.frame), bytes));
+    files.push(written(context, codesPath(cascade.id, job.frame), bytes));
     timer.lap('write');
   }
   return { kind: 'frame', cascade: job.cascade, frame: job.frame, files, statistics, seconds: timer.seconds };
 }
 
-function surveyResult(job: SurveyJob, cascade: PlannedCascade, maker: CascadeMaker): SurveyResult {
+function surveyResult(job: SurveyJob, cascade: PlannedCascade, maker: CascadeMaker): JobResult {
   const fields = maker.fields(job.frame);
   const surveyed = cascade.maps.filter((planned) => !isSurveyed(planned));
   const extents = surveyed.map((planned) => [planned.map, maker.extents(planned, fields)]);
@@ -98,31 +113,23 @@ function foamMeasure(job: FoamMeasureJob, plan: Plan, folder: string): JobResult
   };
 }
 
-function foamResults(job: FoamJob, plan: Plan, folder: string): readonly FrameResult[] {
+function* foamResults(job: FoamJob, context: JobContext): Generator<FrameResult> {
+  const { plan, folder } = context;
   const cascade = plan.cascades[job.cascade];
   const planned = cascade.maps.find(({ map }) => map === 'foam');
-  if (planned === undefined) return [];
-  const results: FrameResult[] = [];
+  if (planned === undefined) return;
   let timer = stageTimer();
   const images = foamImages(plan, cascade, cascade.foam as CascadeFoam, job, codeReader(cascade, folder));
   for (const { frame, image, statistics } of images) {
     timer.lap('foam');
     const { path, bytes } = encodedFile(plan, cascade, planned, image, frame);
     timer.lap('encode');
-    const files = [written(folder, path, bytes)];
+    const files = [written(context, path, bytes)];
     timer.lap('write');
     const { seconds } = timer;
-    results.push({
-      kind: 'foam',
-      cascade: job.cascade,
-      frame,
-      files,
-      statistics: { foam: statistics },
-      seconds,
-    });
+    yield { kind: 'foam', cascade: job.cascade, frame, files, statistics: { foam: statistics }, seconds };
     timer = stageTimer();
   }
-  return results;
 }
 
 /** Reads rows of a frame's J codes from its scratch file; the array is reused. */
@@ -137,8 +144,9 @@ function codeReader(cascade: PlannedCascade, folder: string): CodeReader {
   };
 }
 
-function written(folder: string, path: string, bytes: Uint8Array): WrittenFile {
-  writeFileAtomic(folder, path, bytes);
+/** Folders are not made here: one that is missing was taken away, and what it held with it. */
+function written({ folder, sync }: JobContext, path: string, bytes: Uint8Array): WrittenFile {
+  writeFileAtomic(folder, path, bytes, { sync, makeFolders: false });
   return { path, bytes: bytes.length, sha256: sha256(bytes) };
 }
 

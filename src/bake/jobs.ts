@@ -1,27 +1,23 @@
-import type { Decode } from '../image/image.ts';
 import type { ChannelStatistics } from '../maps/encoded-map.ts';
 import type { MapName } from '../sea/sea.ts';
 
 /** A piece of work that one thread does on its own. Plain and cloneable, as are the results. */
-export type Job = FrameJob | SurveyJob | FoamMeasureJob | FoamJob;
+export type Job = FrameJob | SurveyJob | FoamMeasureJob | FoamJob | CheckJob;
 
-/** All maps but foam of one frame of one cascade, and its Jacobian codes where foam will need them. */
-export interface FrameJob {
-  readonly kind: 'frame';
+/** A frame of a cascade's own loop, from 0. */
+export interface FrameId {
   readonly cascade: number;
-  /** Frame of the cascade's loop, from 0. */
   readonly frame: number;
-  /** Decode rules that a survey found, by map, in channel order. */
-  readonly surveyed: SurveyedRules;
 }
 
-export type SurveyedRules = Readonly<Partial<Record<MapName, readonly Decode[]>>>;
+/** All maps but foam of one frame of one cascade, and its Jacobian codes where foam will need them. */
+export interface FrameJob extends FrameId {
+  readonly kind: 'frame';
+}
 
 /** Largest magnitudes of one frame's quantities, for the maps whose range is surveyed. */
-export interface SurveyJob {
+export interface SurveyJob extends FrameId {
   readonly kind: 'survey';
-  readonly cascade: number;
-  readonly frame: number;
 }
 
 /** Sums of the written foam codes over the loop for several breaking levels, on a grid of texels. */
@@ -45,6 +41,12 @@ export interface FoamJob {
   readonly breakingCode: number;
 }
 
+/** Whether files are what was written: groups of files that count together. */
+export interface CheckJob {
+  readonly kind: 'check';
+  readonly groups: readonly (readonly WrittenFile[])[];
+}
+
 /** A file that is in place under its final name. */
 export interface WrittenFile {
   /** Below the bake folder, with forward slashes. */
@@ -53,11 +55,9 @@ export interface WrittenFile {
   readonly sha256: string;
 }
 
-/** One finished frame of one cascade: what a journal line holds. */
-export interface FrameResult {
+/** One finished frame of one cascade. */
+export interface FrameResult extends FrameId {
   readonly kind: 'frame' | 'foam';
-  readonly cascade: number;
-  readonly frame: number;
   readonly files: readonly WrittenFile[];
   /** What was written, by map, in channel order. */
   readonly statistics: Readonly<Partial<Record<MapName, readonly ChannelStatistics[]>>>;
@@ -81,28 +81,41 @@ export interface FoamMeasureResult {
   readonly sums: readonly number[];
 }
 
-export type JobResult = readonly FrameResult[] | SurveyResult | FoamMeasureResult;
+export interface CheckResult {
+  readonly kind: 'check';
+  /** For each group whether all its files are whole. */
+  readonly intact: readonly boolean[];
+}
+
+/** What a job comes to in the end; jobs that make frames have handed those over one by one. */
+export type JobResult = SurveyResult | FoamMeasureResult | CheckResult | null;
 
 /** Does jobs; several at a time if it can. */
 export interface Executor {
   /** How many jobs it can do at once. */
   readonly width: number;
-  /** @throws LoopswellError naming the cascade and frame where a job fails */
-  run(job: Job): Promise<JobResult>;
+  /**
+   * @param keep receives each frame as soon as its files are in place
+   * @throws LoopswellError naming the cascade and frame where a job fails; StoppedError for a job that was dropped
+   */
+  run(job: Job, keep: (result: FrameResult) => void): Promise<JobResult>;
+  /** Begins no further job and has those in flight finish soon; what takes too long is dropped. */
+  stop(): void;
   close(): Promise<void>;
 }
 
 /** `c1 frame 17`, as messages name a job; frames as in file names. */
 export function jobName(job: Job, firstFrame: number): string {
-  const cascade = `c${job.cascade}`;
   switch (job.kind) {
     case 'frame':
-      return `${cascade} frame ${job.frame + firstFrame}`;
+      return `c${job.cascade} frame ${job.frame + firstFrame}`;
     case 'survey':
-      return `${cascade} frame ${job.frame + firstFrame} (range survey)`;
+      return `c${job.cascade} frame ${job.frame + firstFrame} (range survey)`;
     case 'foam-measure':
-      return `${cascade} foam level, rows ${job.fromRow} to ${job.toRow - 1}`;
+      return `c${job.cascade} foam level, rows ${job.fromRow} to ${job.toRow - 1}`;
     case 'foam':
-      return `${cascade} foam of frames ${job.fromFrame + firstFrame} to ${job.toFrame - 1 + firstFrame}`;
+      return `c${job.cascade} foam of frames ${job.fromFrame + firstFrame} to ${job.toFrame - 1 + firstFrame}`;
+    case 'check':
+      return 'check of finished files';
   }
 }

@@ -7,9 +7,10 @@ export function machineThreads(): number {
   return availableParallelism();
 }
 
-/** Installed memory, bytes. */
+/** Memory this process may have, bytes: what is installed, or less where the system holds it to a limit. */
 export function machineMemoryBytes(): number {
-  return totalmem();
+  const limit = process.constrainedMemory();
+  return limit > 0 ? Math.min(limit, totalmem()) : totalmem();
 }
 
 export function machineName(): string {

@@ -1,7 +1,9 @@
 import { UnavailableError } from '../errors.ts';
 import type { Plan } from '../plan/plan.ts';
 import { freeBytes } from '../store/bake-folder.ts';
+import type { FrameId } from './jobs.ts';
 import { machineMemoryBytes } from './machine.ts';
+import { frameCost } from './shard.ts';
 
 /** A runtime's own memory for the main thread and for each worker, bytes; measured, see DEVELOPERS.md. */
 const MAIN_THREAD_BYTES = 90e6;
@@ -15,10 +17,15 @@ export function expectedMemoryBytes({ report: { cost } }: Plan, threads: number)
 /**
  * Refuses a bake that this machine cannot hold, before anything is written.
  *
- * @param present bytes of the bake that are on the disk already
+ * @param missing frames that are still to be made
  * @throws UnavailableError with the figures
  */
-export function requireResources(plan: Plan, folder: string, threads: number, present: number): void {
+export function requireResources(
+  plan: Plan,
+  folder: string,
+  threads: number,
+  missing: readonly FrameId[],
+): void {
   const memory = expectedMemoryBytes(plan, threads);
   if (memory > machineMemoryBytes()) {
     throw new UnavailableError(
@@ -26,13 +33,20 @@ export function requireResources(plan: Plan, folder: string, threads: number, pr
     );
   }
   const { outputBytes, scratchBytes } = plan.report.cost;
-  const disk = outputBytes + scratchBytes - present;
+  const share = shareOfWork(plan, missing);
+  const disk = share * (outputBytes + scratchBytes);
   const free = freeBytes(folder);
   if (disk > free) {
     throw new UnavailableError(
-      `The bake needs about ${gigabytes(disk)} of disk (${gigabytes(scratchBytes)} of it only while it runs); ${folder} has ${gigabytes(free)} free. Free some or choose another folder.`,
+      `The bake needs about ${gigabytes(disk)} of disk (${gigabytes(share * scratchBytes)} of it only while it runs); ${folder} has ${gigabytes(free)} free. Free some or choose another folder.`,
     );
   }
+}
+
+function shareOfWork(plan: Plan, frames: readonly FrameId[]): number {
+  const costs = plan.cascades.map(frameCost);
+  const all = plan.cascades.reduce((sum, { loop }, c) => sum + loop.frameCount * costs[c], 0);
+  return frames.reduce((sum, { cascade }) => sum + costs[cascade], 0) / all;
 }
 
 function gigabytes(bytes: number): string {

@@ -31,6 +31,8 @@ export interface RunTally {
   phase(name: string): void;
   add(result: FrameResult): void;
   reuse(frames: number): void;
+  /** Whether anything was made. */
+  made(): boolean;
   report(planHash: string, threads: number): RunReport;
 }
 
@@ -57,6 +59,7 @@ export function runTally(): RunTally {
     reuse(frames) {
       framesReused += frames;
     },
+    made: () => bytesWritten > 0,
     report(planHash, threads) {
       const wallSeconds = secondsNow() - start;
       return {

@@ -1,27 +1,23 @@
 import { Worker } from 'node:worker_threads';
-import { type ExitStatus, InternalError, LoopswellError } from '../errors.ts';
-import type { Plan } from '../plan/plan.ts';
-import type { WaveAmplitudes } from '../waves/wave-amplitudes.ts';
-import { type Executor, type Job, type JobResult, jobName } from './jobs.ts';
+import { droppedJob, type JobFailure, jobError, jobFailure } from './job-failure.ts';
+import type { JobContext } from './job-runner.ts';
+import type { Executor, FrameResult, Job, JobResult } from './jobs.ts';
 
 /** What a worker is started with. Wave amplitudes are in shared memory: nothing is copied. */
-export interface WorkerStart {
-  readonly plan: Plan;
-  readonly waves: readonly WaveAmplitudes[];
-  readonly folder: string;
+export interface WorkerStart extends JobContext {
+  /** Int32Array of 1, shared: not 0 once the bake is to stop. */
+  readonly stopFlag: Int32Array;
 }
 
-export type WorkerReply = { readonly result: JobResult } | { readonly failure: JobFailure };
-
-/** An error as it crosses threads, where classes are lost. */
-export interface JobFailure {
-  readonly message: string;
-  readonly exitStatus: ExitStatus | null;
-  readonly stack: string | undefined;
-}
+/** A worker's answers to a job: any number of frames, then one of the others. */
+export type WorkerReply =
+  | { readonly frame: FrameResult }
+  | { readonly result: JobResult }
+  | { readonly failure: JobFailure };
 
 interface Pending {
   readonly job: Job;
+  readonly keep: (result: FrameResult) => void;
   readonly resolve: (result: JobResult) => void;
   readonly reject: (error: Error) => void;
 }
@@ -32,36 +28,61 @@ interface Lane {
   busy: Pending | null;
 }
 
+/** Jobs still going this long after a stop are dropped, so that a process is gone within 5 s of being told, ms. */
+const GRACE_MS = 3000;
+
 /** Runs jobs on worker threads, one job a thread at a time; whoever is free takes the next. */
-export function threadExecutor(start: WorkerStart, threads: number): Executor {
+export function threadExecutor(context: JobContext, threads: number): Executor {
   const script = new URL('./worker.js', import.meta.url);
+  const stopFlag = new Int32Array(new SharedArrayBuffer(4));
+  const workerData: WorkerStart = { ...context, stopFlag };
   const queue: Pending[] = [];
   const lanes: Lane[] = Array.from({ length: threads }, () => ({ worker: null, busy: null }));
+  let stopped = false;
+  let patience: NodeJS.Timeout | undefined;
 
   function newWorker(lane: Lane): Worker {
-    const worker = new Worker(script, { workerData: start });
-    worker.on('message', (reply: WorkerReply) => {
-      const done = lane.busy;
-      lane.busy = null;
-      if (done !== null) settle(done, reply);
-      next(lane);
-    });
-    const died = (error: Error): void => {
+    const worker = new Worker(script, { workerData });
+    worker.on('message', (reply: WorkerReply) => take(lane, worker, reply));
+    const died = (failure: JobFailure): void => {
       // Both events come for one death, and a lane that was closed or has a new thread does not care.
       if (lane.worker !== worker) return;
-      const lost = lane.busy;
       lane.worker = null;
-      lane.busy = null;
-      lost?.reject(named(lost.job, { message: error.message, exitStatus: null, stack: error.stack }));
-      next(lane);
+      free(lane, (lost) => lost.reject(jobError(lost.job, context.plan, failure)));
     };
-    worker.on('error', died);
-    worker.on('exit', (code) => died(new Error(`its thread ended with code ${code}`)));
+    worker.on('error', (error) => died(jobFailure(error)));
+    worker.on('exit', (code) =>
+      died({ message: `its thread ended with code ${code}`, exitStatus: null, stack: undefined }),
+    );
     return worker;
   }
 
+  function take(lane: Lane, worker: Worker, reply: WorkerReply): void {
+    if (lane.worker !== worker || lane.busy === null) return;
+    const { job, keep } = lane.busy;
+    if ('result' in reply) free(lane, ({ resolve }) => resolve(reply.result));
+    else if ('failure' in reply)
+      free(lane, ({ reject }) => reject(jobError(job, context.plan, reply.failure)));
+    else {
+      try {
+        keep(reply.frame);
+      } catch (error) {
+        // The journal cannot be written: the thread's further frames would be of no use.
+        void end(lane);
+        free(lane, ({ reject }) => reject(error as Error));
+      }
+    }
+  }
+
+  /** Settles a lane's job and gives it the next. */
+  function free(lane: Lane, settle: (pending: Pending) => void): void {
+    const done = lane.busy;
+    lane.busy = null;
+    if (done !== null) settle(done);
+    next(lane);
+  }
+
   function next(lane: Lane): void {
-    if (lane.busy !== null) return;
     const pending = queue.shift();
     if (pending === undefined) return;
     lane.busy = pending;
@@ -69,32 +90,44 @@ export function threadExecutor(start: WorkerStart, threads: number): Executor {
     lane.worker.postMessage(pending.job);
   }
 
-  function settle(pending: Pending, reply: WorkerReply): void {
-    if ('result' in reply) pending.resolve(reply.result);
-    else pending.reject(named(pending.job, reply.failure));
+  async function end(lane: Lane): Promise<void> {
+    const { worker } = lane;
+    lane.worker = null;
+    await worker?.terminate();
   }
 
-  function named(job: Job, failure: JobFailure): LoopswellError {
-    const text = `${jobName(job, start.plan.loop.firstFrame)}: ${failure.message}`;
-    const cause = new Error(failure.message);
-    if (failure.stack !== undefined) cause.stack = failure.stack;
-    return failure.exitStatus === null
-      ? new InternalError(text, { cause })
-      : new LoopswellError(text, failure.exitStatus, { cause });
+  function drop(): void {
+    for (const pending of queue.splice(0)) pending.reject(droppedJob());
+  }
+
+  async function close(): Promise<void> {
+    stopped = true;
+    clearTimeout(patience);
+    drop();
+    await Promise.all(
+      lanes.map(async (lane) => {
+        await end(lane);
+        free(lane, ({ reject }) => reject(droppedJob()));
+      }),
+    );
   }
 
   return {
     width: threads,
-    run: (job) =>
+    run: (job, keep) =>
       new Promise((resolve, reject) => {
-        queue.push({ job, resolve, reject });
+        if (stopped) return reject(droppedJob());
+        queue.push({ job, keep, resolve, reject });
         const idle = lanes.find(({ busy }) => busy === null);
         if (idle !== undefined) next(idle);
       }),
-    async close() {
-      const workers = lanes.map(({ worker }) => worker);
-      for (const lane of lanes) lane.worker = null;
-      await Promise.all(workers.map((worker) => worker?.terminate()));
+    stop() {
+      if (stopped) return;
+      stopped = true;
+      Atomics.store(stopFlag, 0, 1);
+      drop();
+      patience = setTimeout(close, GRACE_MS);
     },
+    close,
   };
 }

@@ -1,25 +1,24 @@
 import { parentPort, workerData } from 'node:worker_threads';
-import { LoopswellError } from '../errors.ts';
+import { droppedJob, jobFailure } from './job-failure.ts';
 import { jobRunner } from './job-runner.ts';
 import type { Job } from './jobs.ts';
-import type { JobFailure, WorkerReply, WorkerStart } from './thread-executor.ts';
+import type { WorkerReply, WorkerStart } from './thread-executor.ts';
 
-/** The body of a worker thread: one job in, one reply out. */
-const { plan, waves, folder } = workerData as WorkerStart;
-const runJob = jobRunner(plan, waves, folder);
+/** The body of a worker thread: one job in, its frames as they are done and one last reply out. */
+const { stopFlag, ...context } = workerData as WorkerStart;
+const runJob = jobRunner(context);
+const reply = (message: WorkerReply): void => parentPort?.postMessage(message);
 
-parentPort?.on('message', (job: Job) => parentPort?.postMessage(reply(job)));
-
-function reply(job: Job): WorkerReply {
+parentPort?.on('message', (job: Job) => {
   try {
-    return { result: runJob(job) };
+    const steps = runJob(job);
+    for (;;) {
+      if (Atomics.load(stopFlag, 0) !== 0) throw droppedJob();
+      const step = steps.next();
+      if (step.done === true) return reply({ result: step.value });
+      reply({ frame: step.value });
+    }
   } catch (error) {
-    return { failure: jobFailure(error) };
+    reply({ failure: jobFailure(error) });
   }
-}
-
-function jobFailure(error: unknown): JobFailure {
-  if (!(error instanceof Error)) return { message: String(error), exitStatus: null, stack: undefined };
-  const exitStatus = error instanceof LoopswellError ? error.exitStatus : null;
-  return { message: error.message, exitStatus, stack: error.stack };
-}
+});

@@ -2,6 +2,7 @@ import type { BakeStage } from '../index.ts';
 import { duration, rounded } from './wording.ts';
 
 export const STAGE_WORDS: Readonly<Record<BakeStage, string>> = {
+  check: 'checked',
   survey: 'ranges',
   frames: 'frames',
   'foam-level': 'foam level',

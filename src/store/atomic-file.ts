@@ -1,6 +1,16 @@
-import { closeSync, fsyncSync, mkdirSync, openSync, renameSync, rmSync, writeSync } from 'node:fs';
+import {
+  closeSync,
+  existsSync,
+  fsyncSync,
+  linkSync,
+  mkdirSync,
+  openSync,
+  renameSync,
+  rmSync,
+  writeSync,
+} from 'node:fs';
 import { dirname, join } from 'node:path';
-import { type FileAction, fileError } from './file-errors.ts';
+import { type FileAction, fileError, systemCode } from './file-errors.ts';
 import { insidePath } from './safe-path.ts';
 import { temporaryName } from './temporary-name.ts';
 
@@ -10,11 +20,13 @@ export interface WriteOptions {
    * for frames, which a resumed bake makes again. Default false.
    */
   readonly sync?: boolean;
+  /** Make missing folders. Default true; false where a missing folder means that somebody took it away. */
+  readonly makeFolders?: boolean;
 }
 
 /**
  * Writes a file so that a reader finds either all of it or none: into a temporary in the same folder, then renamed over
- * the name. Folders are made as needed. Synchronous: frames are written inside worker threads.
+ * the name. Synchronous: frames are written inside worker threads.
  * @param folder root of the bake
  * @param relativePath where in it, `/` between folders
  * @param bytes read only
@@ -26,26 +38,86 @@ export function writeFileAtomic(
   bytes: Uint8Array | string,
   options: WriteOptions = {},
 ): void {
+  placeFile(folder, relativePath, bytes, options, (temporary, path) => {
+    renameSync(temporary, path);
+    return true;
+  });
+}
+
+/**
+ * Writes a file unless there is one of that name: of several processes that do this at once, one succeeds. Rests on
+ * hard links, which refuse a taken name on every system; where the file system has none, on a look beforehand.
+ * @returns whether this call made the file
+ * @throws as `writeFileAtomic`
+ */
+export function writeFileOnce(
+  folder: string,
+  relativePath: string,
+  bytes: Uint8Array | string,
+  options: WriteOptions = {},
+): boolean {
+  return placeFile(folder, relativePath, bytes, options, (temporary, path) => {
+    try {
+      linkSync(temporary, path);
+      return true;
+    } catch (cause) {
+      if (systemCode(cause) === 'EEXIST') return false;
+      if (!NO_LINKS.has(systemCode(cause))) throw cause;
+      if (existsSync(path)) return false;
+      renameSync(temporary, path);
+      return true;
+    } finally {
+      removeQuietly(temporary);
+    }
+  });
+}
+
+/** What file systems without hard links answer. */
+const NO_LINKS = new Set(['EPERM', 'ENOTSUP', 'EOPNOTSUPP', 'ENOSYS', 'EMLINK']);
+
+/** Writes the bytes under a temporary name beside the path and has `place` give them their own. */
+function placeFile(
+  folder: string,
+  relativePath: string,
+  bytes: Uint8Array | string,
+  { sync = false, makeFolders = true }: WriteOptions,
+  place: (temporary: string, path: string) => boolean,
+): boolean {
   const path = insidePath(folder, relativePath);
   const parent = dirname(path);
   const temporary = join(parent, temporaryName());
   const data = typeof bytes === 'string' ? new TextEncoder().encode(bytes) : bytes;
   let action: FileAction = 'create';
   try {
-    mkdirSync(parent, { recursive: true });
+    if (makeFolders) mkdirSync(parent, { recursive: true });
     const file = openSync(temporary, 'wx');
     try {
       action = 'write';
       writeWhole(file, data);
-      if (options.sync === true) fsyncSync(file);
+      if (sync) fsyncSync(file);
     } finally {
       closeSync(file);
     }
-    renameSync(temporary, path);
-    if (options.sync === true) syncFolder(parent);
+    const placed = place(temporary, path);
+    if (sync) syncFolder(parent);
+    return placed;
   } catch (cause) {
     removeQuietly(temporary);
     throw fileError(action, path, cause);
+  }
+}
+
+/**
+ * Makes folders inside a folder, and that one, where they are missing.
+ * @throws InputError where a path leaves the folder; CannotCreateError, ReadWriteError
+ */
+export function makeFolders(folder: string, relativePaths: readonly string[]): void {
+  for (const path of relativePaths.map((relativePath) => insidePath(folder, relativePath))) {
+    try {
+      mkdirSync(path, { recursive: true });
+    } catch (cause) {
+      throw fileError('create', path, cause);
+    }
   }
 }
 

@@ -10,6 +10,7 @@ import {
   statSync,
 } from 'node:fs';
 import { dirname, join, relative, resolve, sep } from 'node:path';
+import { CannotCreateError, InputError } from '../errors.ts';
 import { sha256 } from '../hash.ts';
 import { fileError, systemCode } from './file-errors.ts';
 import { insidePath } from './safe-path.ts';
@@ -36,6 +37,25 @@ export function filesIn(folder: string): string[] {
     .filter((entry) => !entry.isDirectory())
     .map((entry) => relative(root, join(entry.parentPath, entry.name)).split(sep).join('/'))
     .sort();
+}
+
+/**
+ * Checks that a folder is there or can be made there.
+ * @throws CannotCreateError where something else is in its place; ReadWriteError
+ */
+export function requireFolderPlace(folder: string): void {
+  const path = resolve(folder);
+  let status: Stats | undefined;
+  try {
+    status = statSync(path, { throwIfNoEntry: false });
+  } catch (cause) {
+    throw fileError('create', path, cause);
+  }
+  if (status?.isDirectory() === false) {
+    throw new CannotCreateError(
+      `Cannot create ${path}: a file is in the place of the folder. Choose another path or move that file away.`,
+    );
+  }
 }
 
 /**
@@ -81,13 +101,45 @@ export interface FileDigest {
 }
 
 /**
- * The digest of a file; null where there is none.
+ * The text of a file that anybody may have put there: never more than a stated size is read.
+ * @param largestBytes what a file of this kind can have at most
+ * @throws InputError where it is larger; ReadWriteError
+ */
+export function fileText(folder: string, relativePath: string, largestBytes: number): string {
+  const size = fileStatus(folder, relativePath)?.size ?? 0;
+  if (size > largestBytes) {
+    throw new InputError(insidePath(folder, relativePath), [
+      {
+        path: '',
+        line: 0,
+        column: 0,
+        expected: `at most ${largestBytes} bytes`,
+        found: `${size}`,
+        remedy: 'This is no file of ours: move it away.',
+      },
+    ]);
+  }
+  return new TextDecoder().decode(fileBytes(folder, relativePath));
+}
+
+/**
+ * Whether a file is there with the size and hash that a journal or manifest states. A file of another size is not read.
  * @throws ReadWriteError
  */
-export function fileDigest(folder: string, relativePath: string): FileDigest | null {
-  if (!hasFile(folder, relativePath)) return null;
-  const bytes = fileBytes(folder, relativePath);
-  return { bytes: bytes.length, sha256: sha256(bytes) };
+export function isIntact(folder: string, digest: FileDigest & { readonly path: string }): boolean {
+  return hasSize(folder, digest) && sha256(fileBytes(folder, digest.path)) === digest.sha256;
+}
+
+/**
+ * Whether a file is there with the size that a journal or manifest states: a look that costs next to nothing.
+ * @throws ReadWriteError
+ */
+export function hasSize(
+  folder: string,
+  { path, bytes }: { readonly path: string; readonly bytes: number },
+): boolean {
+  const status = fileStatus(folder, path);
+  return status?.isFile() === true && status.size === bytes;
 }
 
 /**

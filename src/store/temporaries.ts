@@ -4,37 +4,60 @@ import { writeFileAtomic } from './atomic-file.ts';
 import { fileStatus, filesIn } from './bake-folder.ts';
 import { fileError } from './file-errors.ts';
 import { insidePath } from './safe-path.ts';
-import { HOST, temporaryName, temporaryOwner } from './temporary-name.ts';
+import { HOST, type TemporaryOwner, temporaryName, temporaryOwner } from './temporary-name.ts';
 
 /** A living process writes a temporary in one go; one unchanged for this long is nobody's. */
 const STALE_MS = 3_600_000;
 
 /**
  * Removes what killed processes left half written in a bake folder: at once where the process ran on this host and is
- * gone; after an hour without change where it ran elsewhere, or where its number is in use again.
+ * gone; after an hour without change where it ran elsewhere, or where its number is in use again. Only for when this
+ * process writes nothing there: what bears its own number is then of an earlier process, as in a container, where
+ * everyone is number 1.
  * @returns the removed paths, relative to the folder
  * @throws ReadWriteError, CannotCreateError
  */
 export function removeStaleTemporaries(folder: string): string[] {
-  const temporaries = filesIn(folder).filter((path) => temporaryOwner(posix.basename(path)) !== null);
+  const temporaries = temporariesIn(folder);
   if (temporaries.length === 0) return [];
   const now = fileClockMs(folder);
   const removed: string[] = [];
-  for (const relativePath of temporaries) {
-    const path = insidePath(folder, relativePath);
-    const owner = temporaryOwner(posix.basename(relativePath));
-    const dead = owner !== null && owner.host === HOST && !isAlive(owner.pid);
+  for (const { relativePath, owner } of temporaries) {
+    const dead = owner.host === HOST && (owner.pid === process.pid || !isAlive(owner.pid));
     // Its writer, or another process that cleans, may finish with it at any moment.
     const changed = fileStatus(folder, relativePath)?.mtimeMs;
     if (changed === undefined || (!dead && now - changed < STALE_MS)) continue;
-    try {
-      rmSync(path, { force: true });
-    } catch (cause) {
-      throw fileError('remove', path, cause);
-    }
+    remove(folder, relativePath);
     removed.push(relativePath);
   }
   return removed;
+}
+
+/**
+ * Removes what threads of this process left half written when they were ended. Only for when none of them writes any
+ * more.
+ * @throws ReadWriteError
+ */
+export function removeOwnTemporaries(folder: string): void {
+  for (const { relativePath, owner } of temporariesIn(folder)) {
+    if (owner.host === HOST && owner.pid === process.pid) remove(folder, relativePath);
+  }
+}
+
+function temporariesIn(folder: string): { readonly relativePath: string; readonly owner: TemporaryOwner }[] {
+  return filesIn(folder).flatMap((relativePath) => {
+    const owner = temporaryOwner(posix.basename(relativePath));
+    return owner === null ? [] : [{ relativePath, owner }];
+  });
+}
+
+function remove(folder: string, relativePath: string): void {
+  const path = insidePath(folder, relativePath);
+  try {
+    rmSync(path, { force: true });
+  } catch (cause) {
+    throw fileError('remove', path, cause);
+  }
 }
 
 /**
@@ -55,7 +78,7 @@ function fileClockMs(folder: string): number {
 }
 
 /** Whether a process of this number runs on this host. */
-function isAlive(pid: number): boolean {
+export function isAlive(pid: number): boolean {
   try {
     process.kill(pid, 0);
     return true;

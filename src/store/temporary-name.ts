@@ -15,6 +15,14 @@ export const HOST: string =
     .replaceAll(/[^A-Za-z0-9.-]/g, '-')
     .slice(0, 100) || 'host';
 
+/** This process, as journals and temporaries name it. */
+export const THIS_PROCESS: TemporaryOwner = Object.freeze({ host: HOST, pid: process.pid });
+
+/** A name for a journal, that no other process and no other run in this one has. */
+export function journalName(): string {
+  return `${HOST}-${process.pid}-${crypto.randomUUID()}`;
+}
+
 /** A name for a file being written, that no other process and no other thread of this one makes. */
 export function temporaryName(): string {
   return `.loopswell~${HOST}~${process.pid}~${crypto.randomUUID()}.tmp`;

@@ -10,7 +10,7 @@ import {
 import { join } from 'node:path';
 import { expect, it } from 'vitest';
 import { CannotCreateError, InputError, type LoopswellError } from '../../../src/errors.ts';
-import { writeFileAtomic } from '../../../src/store/atomic-file.ts';
+import { makeFolders, writeFileAtomic, writeFileOnce } from '../../../src/store/atomic-file.ts';
 import { withTemporaryFolder } from '../../support/foreign-program.ts';
 
 /** The error that `body` raises. */
@@ -92,5 +92,27 @@ it('never writes outside its folder', () => {
     expect(() => writeFileAtomic(folder, '../escaped', 'x')).toThrow(InputError);
     expect(existsSync(join(outer, 'escaped'))).toBe(false);
     expect(existsSync(folder)).toBe(false);
+  });
+});
+
+it('makes no folder where a missing one means that it was taken away', () => {
+  withTemporaryFolder((folder) => {
+    expect(() => writeFileAtomic(folder, 'c0/frame', 'x', { makeFolders: false })).toThrow(/ENOENT/);
+    makeFolders(folder, ['c0', 'c1/deep', 'c0']);
+    writeFileAtomic(folder, 'c0/frame', 'x', { makeFolders: false });
+    expect(readdirSync(folder, { recursive: true }).sort()).toEqual(['c0', 'c0/frame', 'c1', 'c1/deep']);
+    expect(() => makeFolders(folder, ['c0/frame/x'])).toThrow(CannotCreateError);
+    expect(() => makeFolders(folder, ['../outside'])).toThrow(InputError);
+  });
+});
+
+it('writes a file once: who comes later changes nothing and is told', () => {
+  withTemporaryFolder((folder) => {
+    expect(writeFileOnce(folder, 'work/plan.json', 'first')).toBe(true);
+    expect(writeFileOnce(folder, 'work/plan.json', 'second')).toBe(false);
+    expect(readFileSync(join(folder, 'work/plan.json'), 'utf8')).toBe('first');
+    expect(readdirSync(join(folder, 'work'))).toEqual(['plan.json']);
+    mkdirSync(join(folder, 'taken'));
+    expect(writeFileOnce(folder, 'taken', 'x')).toBe(false);
   });
 });

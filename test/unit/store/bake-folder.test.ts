@@ -5,24 +5,28 @@ import {
   readdirSync,
   statfsSync,
   symlinkSync,
+  truncateSync,
   utimesSync,
   writeFileSync,
 } from 'node:fs';
 import { hostname } from 'node:os';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { InputError, ReadWriteError } from '../../../src/errors.ts';
+import { CannotCreateError, InputError, ReadWriteError } from '../../../src/errors.ts';
 import { writeFileAtomic } from '../../../src/store/atomic-file.ts';
 import {
   fileBytes,
-  fileDigest,
   filesIn,
+  fileText,
   freeBytes,
   hasFile,
+  hasSize,
+  isIntact,
   removeFiles,
+  requireFolderPlace,
 } from '../../../src/store/bake-folder.ts';
 import { fillFromFiles } from '../../../src/store/scratch.ts';
-import { removeStaleTemporaries } from '../../../src/store/temporaries.ts';
+import { removeOwnTemporaries, removeStaleTemporaries } from '../../../src/store/temporaries.ts';
 import { temporaryName, temporaryOwner } from '../../../src/store/temporary-name.ts';
 import { endedProcessId } from '../../support/foreign-process.ts';
 import { withTemporaryFolder } from '../../support/foreign-program.ts';
@@ -68,13 +72,55 @@ describe('what is in a folder', () => {
       expect(hasFile(folder, 'c0/foam.0003.png')).toBe(false);
       expect(hasFile(folder, 'manifest.json/x')).toBe(false);
       expect(Buffer.from(fileBytes(folder, 'manifest.json')).toString()).toBe('manifest.json');
-      const hex = createHash('sha256').update('manifest.json').digest('hex');
-      expect(fileDigest(folder, 'manifest.json')).toEqual({ bytes: 13, sha256: `sha256:${hex}` });
-      expect(fileDigest(folder, 'none')).toBeNull();
+      expect(fileText(folder, 'manifest.json', 13)).toBe('manifest.json');
+      expect(() => fileText(folder, 'manifest.json', 12)).toThrow(/expected at most 12 bytes, found 13/);
       expect(() => fileBytes(folder, 'none')).toThrow(
         /Cannot read .+none: there is no such file or folder \(ENOENT\)/,
       );
       expect(() => fileBytes(folder, '../outside')).toThrow(InputError);
+    });
+  });
+});
+
+it('the place of a folder may be empty but not another thing', () => {
+  withFiles((folder) => {
+    for (const path of ['.', 'c0', 'none', 'none/none']) requireFolderPlace(join(folder, path));
+    for (const path of ['manifest.json', 'manifest.json/x']) {
+      expect(() => requireFolderPlace(join(folder, path)), path).toThrow(CannotCreateError);
+    }
+  });
+});
+
+describe('a stated file', () => {
+  const hex = createHash('sha256').update('manifest.json').digest('hex');
+  const stated = { path: 'manifest.json', bytes: 13, sha256: `sha256:${hex}` };
+
+  it('is intact with its size and hash, and with nothing else', () => {
+    withFiles((folder) => {
+      expect(isIntact(folder, stated)).toBe(true);
+      expect(hasSize(folder, stated)).toBe(true);
+      expect(isIntact(folder, { ...stated, bytes: 14 })).toBe(false);
+      expect(isIntact(folder, { ...stated, path: 'c0/foam.0001.png' })).toBe(false);
+      writeFileSync(join(folder, 'manifest.json'), 'Manifest.json');
+      expect(isIntact(folder, stated)).toBe(false);
+      expect(hasSize(folder, stated)).toBe(true);
+    });
+  });
+
+  it('is not intact where it is missing, or a folder is in its place', () => {
+    withFiles((folder) => {
+      for (const path of ['none', 'none/none', 'c0', 'manifest.json/x']) {
+        expect(isIntact(folder, { ...stated, path }), path).toBe(false);
+        expect(hasSize(folder, { ...stated, path }), path).toBe(false);
+      }
+      expect(() => isIntact(folder, { ...stated, path: '../outside' })).toThrow(InputError);
+    });
+  });
+
+  it('is not read where it has another size', () => {
+    withFiles((folder) => {
+      truncateSync(join(folder, 'manifest.json'), 2 ** 40);
+      expect(isIntact(folder, stated)).toBe(false);
     });
   });
 });
@@ -117,6 +163,8 @@ describe('removeStaleTemporaries', () => {
   const random = '01234567-89ab-cdef-0123-456789abcdef';
   const named = (host: string, pid: number) => `.loopswell~${host}~${pid}~${random}.tmp`;
 
+  const parentProcessId = process.ppid;
+
   /** Puts a file into the folder that has not changed for so many seconds. */
   function put(folder: string, path: string, ageS: number): void {
     writeFileAtomic(folder, path, '');
@@ -131,21 +179,24 @@ describe('removeStaleTemporaries', () => {
       const dead = endedProcessId();
       const minutes = 60;
       put(folder, `c0/${named(here, dead)}`, 0);
-      put(folder, `c0/${named(here, process.pid)}`, 59 * minutes);
-      put(folder, `c1/${named(here, process.ppid)}`, 61 * minutes);
+      put(folder, `c0/${named(here, parentProcessId)}`, 59 * minutes);
+      // An earlier process had this one's number: this one writes nothing there yet.
+      put(folder, `c0/${named(here, process.pid)}`, 0);
+      put(folder, `c1/${named(here, parentProcessId)}`, 61 * minutes);
       put(folder, named('elsewhere', dead), 59 * minutes);
       put(folder, named('elsewhere.example', dead), 61 * minutes);
       // Not ours, however old.
       put(folder, '.loopswell~x.tmp', 100 * minutes);
       put(folder, 'c1/foam.0001.png', 100 * minutes);
-      const kept = [`c0/${named(here, process.pid)}`, named('elsewhere', dead), '.loopswell~x.tmp'];
+      const kept = [`c0/${named(here, parentProcessId)}`, named('elsewhere', dead), '.loopswell~x.tmp'];
       const others = filesIn(folder).filter((path) => !path.includes('~'));
 
       const removed = removeStaleTemporaries(folder);
       expect(removed.sort()).toEqual(
         [
           `c0/${named(here, dead)}`,
-          `c1/${named(here, process.ppid)}`,
+          `c0/${named(here, process.pid)}`,
+          `c1/${named(here, parentProcessId)}`,
           named('elsewhere.example', dead),
         ].sort(),
       );
@@ -159,6 +210,18 @@ describe('removeStaleTemporaries', () => {
       expect(removeStaleTemporaries(folder)).toEqual([]);
       expect(removeStaleTemporaries(join(folder, 'none'))).toEqual([]);
       expect(existsSync(join(folder, 'none'))).toBe(false);
+    });
+  });
+});
+
+describe('removeOwnTemporaries', () => {
+  it('takes those of this process and no others', () => {
+    withFiles((folder) => {
+      writeFileAtomic(folder, `c0/${temporaryName()}`, '');
+      const others = temporaryName().replace(`~${process.pid}~`, `~${process.ppid}~`);
+      writeFileAtomic(folder, others, '');
+      removeOwnTemporaries(folder);
+      expect(filesIn(folder).filter((path) => path.endsWith('.tmp'))).toEqual([others]);
     });
   });
 });
