@@ -13,7 +13,10 @@ export function canonicalJson(value: unknown, indent = 0): string {
   return JSON.stringify(value, replacer, indent);
 }
 
-/** Reviver for `JSON.parse` that undoes what `canonicalJson` does to `Infinity`. */
-export function reviveInfinity(_key: string, value: unknown): unknown {
-  return value === 'Infinity' ? Infinity : value;
+/**
+ * Reviver for `JSON.parse` that undoes what `canonicalJson` does to `Infinity`, in lengths only (keys that end in `M`):
+ * a title or a name may be that word.
+ */
+export function reviveInfinity(key: string, value: unknown): unknown {
+  return value === 'Infinity' && key.endsWith('M') ? Infinity : value;
 }

@@ -62,7 +62,7 @@ function plannedLayouts(
     const equalRatio = (shortestSoFar / request.shortestWavelengthM) ** (1 / remaining);
     const ratio = Math.min(equalRatio, largestRatio);
     if (ratio < 1.5) break;
-    patches.push(fourDigits(patches[patches.length - 1] / unrelatedRatio(patches, ratio)));
+    patches.push(unrelatedPatch(patches, ratio));
   }
   let low: BandBorder | null = null;
   return patches.map((patchLengthM, c) => {
@@ -84,20 +84,22 @@ function longestPatch(tables: readonly RadialTable[]): number {
 }
 
 /**
- * The ratio in [0.9 R, R] farthest from simple fractions with every longer patch, leaning slightly to the larger: tiles
- * whose lengths share a small multiple line up and repeat together.
+ * The next patch, m: shorter than the last by a ratio in [0.9 R, R], as far from simple fractions with every longer
+ * patch as can be, leaning slightly to the larger ratio. Tiles whose lengths share a small multiple line up and repeat
+ * together. Lengths are judged as they will be written: rounding alone can bring two in line.
  */
-function unrelatedRatio(patches: readonly number[], R: number): number {
+function unrelatedPatch(patches: readonly number[], R: number): number {
   const last = patches[patches.length - 1];
-  let best = R;
+  let best = last / R;
   let bestScore = -Infinity;
   for (let step = 0; step <= 50; step++) {
     const r = (0.9 + 0.002 * step) * R;
+    const candidate = fourDigits(last / r);
     let distance = Infinity;
-    for (const patch of patches) distance = Math.min(distance, distanceToFractions((patch * r) / last));
+    for (const patch of patches) distance = Math.min(distance, distanceToFractions(patch / candidate));
     const score = distance + (0.02 * r) / R;
     if (score > bestScore) {
-      best = r;
+      best = candidate;
       bestScore = score;
     }
   }
@@ -120,30 +122,49 @@ function fourDigits(value: number): number {
 
 function listedLayouts(request: ListedCascades, loop: Loop): readonly CascadeLayout[] {
   const { list, headRoom } = request;
-  const borders = list.slice(1).map((finer, c) => sharedBorder(list[c], finer, headRoom));
-  return list.map((cascade, c) => ({
-    patchLengthM: cascade.patchLengthM,
-    resolution: cascade.resolution,
-    band: {
-      low: c === 0 ? outerLow(cascade) : borders[c - 1].low,
-      high: c === list.length - 1 ? upperBorder(cascade, headRoom) : borders[c].high,
-    },
-    loop: cascade.loop ?? loop,
-  }));
+  let low = outerLow(list[0], headRoom);
+  return list.map((cascade, c) => {
+    const next = c + 1 < list.length ? sharedBorder(cascade, list[c + 1], headRoom) : null;
+    const high = inOrder(next?.high ?? upperBorder(cascade, headRoom), low);
+    const { patchLengthM, resolution } = cascade;
+    const layout = { patchLengthM, resolution, band: { low, high }, loop: cascade.loop ?? loop };
+    low = inOrder(next?.low ?? high, high);
+    return layout;
+  });
 }
 
-/** The border that ends a band at its shortest wave, stated or by the head room; it fades inside the band. */
+/** Wavenumber at which a listed cascade's band ends, stated or by the head room, rad/m. */
+function bandTop(cascade: ListedCascade, headRoom: number): number {
+  const { shortestWavelengthM } = cascade;
+  return shortestWavelengthM === null
+    ? headRoom * nyquistWavenumber(cascade)
+    : (2 * Math.PI) / shortestWavelengthM;
+}
+
+/** Wavenumber at which a listed cascade's band begins, stated or by the patch, rad/m. */
+function bandBottom({ longestWavelengthM, patchLengthM }: ListedCascade): number {
+  return (2 * Math.PI) / (longestWavelengthM ?? patchLengthM);
+}
+
+/** Fade of a border inside a cascade's own band: the standard one, but no more than a quarter of a narrow band. */
+function ownFade(cascade: ListedCascade, headRoom: number): number {
+  return Math.min(BORDER_FADE, (bandTop(cascade, headRoom) / bandBottom(cascade)) ** 0.25);
+}
+
+/** The border that ends a band at its shortest wave; it fades inside the band. */
 function upperBorder(cascade: ListedCascade, headRoom: number): BandBorder {
-  const kMax =
-    cascade.shortestWavelengthM === null
-      ? headRoom * nyquistWavenumber(cascade)
-      : (2 * Math.PI) / cascade.shortestWavelengthM;
-  return { kRadPerM: kMax / BORDER_FADE, fade: BORDER_FADE };
+  const fade = ownFade(cascade, headRoom);
+  return { kRadPerM: bandTop(cascade, headRoom) / fade, fade };
 }
 
-function outerLow(cascade: ListedCascade): BandBorder | null {
-  if (cascade.longestWavelengthM === null) return null;
-  return { kRadPerM: ((2 * Math.PI) / cascade.longestWavelengthM) * BORDER_FADE, fade: BORDER_FADE };
+/** The border that begins a band at its stated longest wave; it fades inside the band. */
+function lowerBorder(cascade: ListedCascade, headRoom: number): BandBorder {
+  const fade = ownFade(cascade, headRoom);
+  return { kRadPerM: bandBottom(cascade) * fade, fade };
+}
+
+function outerLow(cascade: ListedCascade, headRoom: number): BandBorder | null {
+  return cascade.longestWavelengthM === null ? null : lowerBorder(cascade, headRoom);
 }
 
 /**
@@ -158,14 +179,32 @@ function sharedBorder(
 ): { readonly high: BandBorder; readonly low: BandBorder } {
   const upper = upperBorder(longer, headRoom);
   if (finer.longestWavelengthM === null) return { high: upper, low: upper };
-  const kTop = upper.kRadPerM * upper.fade;
-  const kBottom = (2 * Math.PI) / finer.longestWavelengthM;
+  const kBottom = bandBottom(finer);
+  const kTop = Math.min(bandTop(longer, headRoom), bandTop(finer, headRoom));
   if (kTop / kBottom >= NARROWEST_OVERLAP) {
-    const shared = { kRadPerM: Math.sqrt(kTop * kBottom), fade: Math.sqrt(kTop / kBottom) };
+    const shared = borderBetween(kBottom, kTop);
     return { high: shared, low: shared };
   }
-  if (kBottom <= kTop * 1.001) return { high: upper, low: upper };
-  return { high: upper, low: { kRadPerM: kBottom * BORDER_FADE, fade: BORDER_FADE } };
+  if (kBottom <= bandTop(longer, headRoom) * 1.001) return { high: upper, low: upper };
+  return { high: upper, low: lowerBorder(finer, headRoom) };
+}
+
+/**
+ * A border moved up, where need be, so that it begins and ends no lower than the one before it: the weights of bands
+ * that overlap three deep, or of a patch whose band ends before its longer neighbour's, then still sum to 1.
+ */
+function inOrder(border: BandBorder, before: BandBorder | null): BandBorder {
+  if (before === null) return border;
+  const [from, to] = [border.kRadPerM / border.fade, border.kRadPerM * border.fade];
+  const [leastFrom, leastTo] = [before.kRadPerM / before.fade, before.kRadPerM * before.fade];
+  if (from >= leastFrom && to >= leastTo) return border;
+  if (from <= leastFrom && to <= leastTo) return before;
+  return borderBetween(Math.max(from, leastFrom), Math.max(to, leastTo));
+}
+
+/** The border that fades over the wavenumbers from .. to, rad/m. */
+function borderBetween(from: number, to: number): BandBorder {
+  return { kRadPerM: Math.sqrt(from * to), fade: Math.sqrt(to / from) };
 }
 
 /** Wavelengths between neighbouring bands that neither holds. */

@@ -9,6 +9,9 @@ import type { CascadeReport, LossReport, SystemReport } from './plan.ts';
 /** Waves with fewer than this across a tile are seen as its large features. */
 const LARGE_FEATURE_WAVES = 8;
 
+/** Waves that spread all round have no mean direction to shift: theirs is the noise of a resultant this short. */
+const NO_MEAN_DIRECTION = 0.01;
+
 /** What each cascade carries, of height and of slope. */
 export function cascadeReports(
   layouts: readonly CascadeLayout[],
@@ -87,16 +90,18 @@ export function systemReports(
     const coveredVariance = radialIntegral(table, covered);
     const coveredFrequency = radialIntegral(table, (k) => covered(k) * table.spectrum.intrinsicFrequency(k));
     const systemVariance = radialIntegral(table, () => 1);
-    const direction = Math.atan2(
-      sum((tally) => tally.north),
-      sum((tally) => tally.east),
-    );
+    const [east, north] = [sum((tally) => tally.east), sum((tally) => tally.north)];
+    const isDirected = Math.hypot(east, north) > NO_MEAN_DIRECTION * variance;
     return {
       name: table.spectrum.system.name,
       heightVarianceShare: systemVariance / m0,
       meanFrequencyShift:
-        variance === 0 ? 0 : sum((tally) => tally.frequency) / variance / (coveredFrequency / coveredVariance) - 1,
-      meanDirectionShiftRad: variance === 0 ? 0 : wrapped(direction - table.spectrum.system.towardRad),
+        variance === 0
+          ? 0
+          : sum((tally) => tally.frequency) / variance / (coveredFrequency / coveredVariance) - 1,
+      meanDirectionShiftRad: isDirected
+        ? wrapped(Math.atan2(north, east) - table.spectrum.system.towardRad)
+        : 0,
       effectiveWaves: variance === 0 ? 0 : variance ** 2 / sum((tally) => tally.squares),
       zeroCellShare: sum((tally) => tally.zeroCell) / systemVariance,
     };

@@ -44,7 +44,10 @@ export function costReport(cascades: readonly PlannedCascade[]): CostReport {
     const texels = cascade.resolution ** 2;
     const { frameCount } = cascade.loop;
     const pairs = new Set(cascade.maps.flatMap(({ map }) => TRANSFORMS[map]));
-    const storedBytes = cascade.maps.reduce((sum, map) => sum + texels * map.channels.length * SAMPLE_BYTES[map.sample], 0);
+    const storedBytes = cascade.maps.reduce(
+      (sum, map) => sum + texels * map.channels.length * SAMPLE_BYTES[map.sample],
+      0,
+    );
     files += frameCount * cascade.maps.length;
     outputBytes += frameCount * cascade.maps.reduce((sum, map) => sum + writtenBytes(map, texels), 0);
     if (cascade.foam !== null) scratchBytes += frameCount * texels * 2;
@@ -57,7 +60,14 @@ export function costReport(cascades: readonly PlannedCascade[]): CostReport {
         storedBytes * SECONDS_PER_STORED_BYTE +
         (cascade.foam === null ? 0 : texels * SECONDS_PER_FOAM_TEXEL));
   }
-  return { files, outputBytes: Math.round(outputBytes), scratchBytes, sharedBytes, bytesPerThread, coreSeconds };
+  return {
+    files,
+    outputBytes: Math.round(outputBytes),
+    scratchBytes,
+    sharedBytes,
+    bytesPerThread,
+    coreSeconds,
+  };
 }
 
 function writtenBytes(map: PlannedMap, texels: number): number {

@@ -218,7 +218,9 @@ function quantityDeviation(quantity: Quantity, d: FieldDeviations): number {
 }
 
 /** Whether every decode rule of a map is known. */
-export function isSurveyed(map: PlannedMap): map is PlannedMap & { readonly channels: readonly ChannelSpec[] } {
+export function isSurveyed(
+  map: PlannedMap,
+): map is PlannedMap & { readonly channels: readonly ChannelSpec[] } {
   return map.channels.every((channel) => channel.decode !== null);
 }
 

@@ -1,12 +1,13 @@
-import { FOAM_DECAY_SALT_S, whitecapCoverage } from '../physics/whitecaps.ts';
+import { InputError } from '../errors.ts';
 import { cothKh } from '../physics/dispersion.ts';
+import { FOAM_DECAY_SALT_S, whitecapCoverage } from '../physics/whitecaps.ts';
+import { loopSeconds } from '../sea/loop-length.ts';
 import type { FoamRequest, Sea } from '../sea/sea.ts';
 import { type Band, bandWeight } from '../waves/band.ts';
-import { type RadialTable, radialIntegral } from '../waves/radial-table.ts';
 import type { FieldDeviations } from '../waves/field-deviations.ts';
-import { jacobianDecode } from './encodings.ts';
-import { loopSeconds } from '../sea/loop-length.ts';
+import { type RadialTable, radialIntegral } from '../waves/radial-table.ts';
 import type { CascadeLayout } from './cascade-layout.ts';
+import { jacobianDecode } from './encodings.ts';
 import type { CascadeFoam, PlannedFoam } from './plan.ts';
 import type { ResolvedSystem } from './systems.ts';
 
@@ -38,7 +39,9 @@ export function plannedFoam(sea: Sea, systems: readonly ResolvedSystem[]): Plann
       return { by: target.by, coverage: target.coverage, residue };
     case 'wind': {
       const winds = systems.flatMap(({ windSpeedMps }) => windSpeedMps ?? []);
-      return winds.length === 0 ? null : { by: 'wind', coverage: whitecapCoverage(Math.max(...winds)), residue };
+      return winds.length === 0
+        ? null
+        : { by: 'wind', coverage: whitecapCoverage(Math.max(...winds)), residue };
     }
   }
 }
@@ -47,6 +50,8 @@ export function plannedFoam(sea: Sea, systems: readonly ResolvedSystem[]): Plann
  * Shares of the foam by cascade: shares of the compression variance of waves of at least 1 m,
  *
  *     q_c = integral of k^2 coth^2(kh) E w_c dk over lambda >= 1 m, normalised.
+ *
+ * @throws InputError where the user's shares are not one for each cascade
  */
 export function foamShares(
   request: FoamRequest,
@@ -54,15 +59,31 @@ export function foamShares(
   tables: readonly RadialTable[],
   depthM: number,
 ): readonly number[] {
-  if (request.shares !== null) return request.shares;
+  if (request.shares !== null) return checkedShares(request.shares, layouts.length);
   const compression = layouts.map(({ band }) => compressionVariance(tables, band, depthM));
   const sum = compression.reduce((a, b) => a + b, 0);
   return sum === 0 ? compression : compression.map((variance) => variance / sum);
 }
 
+/** A planned sea can need fewer cascades than were allowed, which no sea file shows. */
+function checkedShares(shares: readonly number[], cascades: number): readonly number[] {
+  if (shares.length === cascades) return shares;
+  throw new InputError('<sea>', [
+    {
+      path: 'foam.shares',
+      line: 0,
+      column: 0,
+      expected: `${cascades} shares, one for each planned cascade`,
+      found: `${shares.length}`,
+      remedy: 'Give each cascade its share (0 is one), or leave the shares to the plan.',
+    },
+  ]);
+}
+
 function compressionVariance(tables: readonly RadialTable[], band: Band, depthM: number): number {
   const kMax = (2 * Math.PI) / SHORTEST_BREAKER_M;
-  const integrand = (k: number): number => (k > kMax ? 0 : (k * cothKh(k, depthM)) ** 2 * bandWeight(k, band));
+  const integrand = (k: number): number =>
+    k > kMax ? 0 : (k * cothKh(k, depthM)) ** 2 * bandWeight(k, band);
   return tables.reduce((sum, table) => sum + radialIntegral(table, integrand), 0);
 }
 

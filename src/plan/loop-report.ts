@@ -1,9 +1,10 @@
 import { absoluteAngularFrequency, angularFrequency } from '../physics/dispersion.ts';
 import type { Current, Water } from '../physics/water.ts';
-import type { Loop } from '../sea/sea.ts';
 import { loopSeconds } from '../sea/loop-length.ts';
+import type { Loop } from '../sea/sea.ts';
+import { bandWeight } from '../waves/band.ts';
 import type { LatticeTally } from '../waves/lattice-tally.ts';
-import { type RadialTable, wavevectorDensity } from '../waves/radial-table.ts';
+import { type RadialTable, radialIntegral, wavevectorDensity } from '../waves/radial-table.ts';
 import { turnsPerLoop } from '../waves/turns.ts';
 import type { CascadeLayout } from './cascade-layout.ts';
 import type { CascadeLoopReport, LoopReport, LoopSuggestion } from './plan.ts';
@@ -44,13 +45,17 @@ export function loopReport(
     aboveHalfFrames: total((tally) => tally.aboveHalfFrames) / m0,
     blendingLoss: total((tally) => tally.blendingLoss) / m0,
     slopeBlendingLoss: total((tally, dk2) => tally.slopeBlendingLoss * dk2) / slope,
-    peakSpeedError: peakSpeedError(tables, water, current, seconds),
+    peakSpeedError: peakSpeedError(layouts, tables, water, current),
     suggestions: loopSuggestions(samples, loop),
     cascades,
   };
 }
 
-function cascadeLoopReport(id: string, layout: CascadeLayout, tallies: readonly LatticeTally[]): CascadeLoopReport {
+function cascadeLoopReport(
+  id: string,
+  layout: CascadeLayout,
+  tallies: readonly LatticeTally[],
+): CascadeLoopReport {
   const total = (value: (tally: LatticeTally) => number): number =>
     tallies.reduce((sum, tally) => sum + value(tally), 0);
   const m0 = total((tally) => tally.variance) || 1;
@@ -68,12 +73,22 @@ function cascadeLoopReport(id: string, layout: CascadeLayout, tallies: readonly 
   };
 }
 
-/** Relative speed error of the wave at the peak of the highest system, travelling in its mean direction. */
-function peakSpeedError(tables: readonly RadialTable[], water: Water, current: Current, seconds: number): number {
-  const energies = tables.map(({ density, wavenumber }) => density.reduce((sum, E, i) => sum + E * wavenumber[i], 0));
+/**
+ * Relative speed error of the wave at the peak of the highest system, travelling in its mean direction, in the loop of
+ * the cascade that holds most of it.
+ */
+function peakSpeedError(
+  layouts: readonly CascadeLayout[],
+  tables: readonly RadialTable[],
+  water: Water,
+  current: Current,
+): number {
+  const energies = tables.map((table) => radialIntegral(table, () => 1));
   const { spectrum } = tables[energies.indexOf(Math.max(...energies))];
   const { towardRad } = spectrum.system;
   const k = spectrum.peakWavenumberRadPerM;
+  const holder = layouts.reduce((a, b) => (bandWeight(k, b.band) > bandWeight(k, a.band) ? b : a));
+  const seconds = loopSeconds(holder.loop);
   const omega = absoluteAngularFrequency(k * Math.cos(towardRad), k * Math.sin(towardRad), water, current);
   const m = turnsPerLoop(omega, spectrum.omegaPeakRadPerS, seconds);
   return ((2 * Math.PI * m) / seconds - omega) / spectrum.omegaPeakRadPerS;

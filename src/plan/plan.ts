@@ -15,7 +15,11 @@ export type EngineName = 'float64';
 export interface Plan {
   readonly format: 'loopswell-plan';
   readonly version: 1;
-  readonly generator: { readonly name: 'loopswell'; readonly version: string; readonly outputVersion: number };
+  readonly generator: {
+    readonly name: 'loopswell';
+    readonly version: string;
+    readonly outputVersion: number;
+  };
   readonly engine: EngineName;
   readonly title: string;
   readonly seed: number;

@@ -145,7 +145,9 @@ function foamWarnings({ cascades, foam, water, shaping }: Omit<Plan, 'hash'>): s
 }
 
 function mapWarnings({ cascades }: Omit<Plan, 'hash'>): string[] {
-  const coarse = cascades.flatMap((cascade) => cascade.maps.flatMap((map) => coarseStep(cascade, map.map) ?? []));
+  const coarse = cascades.flatMap((cascade) =>
+    cascade.maps.flatMap((map) => coarseStep(cascade, map.map) ?? []),
+  );
   return coarse;
 }
 
