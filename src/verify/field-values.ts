@@ -85,7 +85,16 @@ function fillValues(
   const si = siPerUnit(channel);
   const scale = channel.decode.scale * si;
   const offset = channel.decode.offset * si;
-  const floats = { sample, scale, step: 0, dithered: false, low: -Infinity, high: Infinity, extremes: 0 };
+  const floats = {
+    sample,
+    scale,
+    step: 0,
+    dithered: false,
+    low: -Infinity,
+    high: Infinity,
+    clipping: 0,
+    extremes: 0,
+  };
   if (sample === 'half') {
     const halves = plane as Uint16Array;
     fillFromHalf(values, halves);
@@ -120,14 +129,14 @@ function fillValues(
     meanSquare: meanSquareOfCodes(size, dithered),
     extremes,
   };
-  if (channel.written.clipped === 0) return { ...codes, low: -Infinity, high: Infinity };
+  if (channel.written.clipped === 0) return { ...codes, low: -Infinity, high: Infinity, clipping: 0 };
   const deviation = channel.written.deviation * si;
   const clipping = meanSquareOfClipping(extremes / plane.length, Math.abs(scale) / 2, deviation * deviation);
   return {
     ...codes,
     low: Math.min(offset, offset + scale),
     high: Math.max(offset, offset + scale),
-    meanSquare: codes.meanSquare + clipping,
+    clipping,
   };
 }
 

@@ -28,7 +28,7 @@ export interface MeasuredWaves {
   /** Mean of eta^2 over texels and frames, and mean of eta: m^2 and m. */
   readonly meanSquare: number;
   readonly mean: number;
-  /** Mean square of the rounding error of the height as stored, m^2. */
+  /** Mean square of the error of the height as stored, by rounding and clipping, m^2. */
   readonly rounding: number;
 }
 
@@ -109,9 +109,9 @@ export function waveProjection(
   };
 
   return {
-    add(index, { values, rounding: { meanSquare } }) {
+    add(index, { values, rounding: { meanSquare, clipping } }) {
       frames++;
-      rounding += meanSquare;
+      rounding += meanSquare + clipping;
       for (const value of values) {
         sum += value;
         squares += value * value;

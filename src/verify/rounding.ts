@@ -15,8 +15,10 @@ export interface Rounding {
   /** Values of the lowest and highest code, where values beyond them were clipped; infinite where none was. */
   readonly low: number;
   readonly high: number;
-  /** Mean square of the error over the frame, see `meanSquareOf...`. */
+  /** Mean square of the error over the frame: of rounding, white in space, see `meanSquareOf...`. */
   readonly meanSquare: number;
+  /** And of clipping, which flattens crests: as smooth as the waves are. */
+  readonly clipping: number;
 }
 
 /** Relative step of a binary32 number is at most 2^-23: half of it. */

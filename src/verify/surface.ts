@@ -146,6 +146,8 @@ interface PairFactors {
 
 /** Means over all N*N waves, those off the band counting 0, of products of wavenumbers: how white noise comes through. */
 interface BandMeans {
+  /** Share of the waves that are in the band. */
+  readonly share: number;
   readonly xx: number;
   readonly yy: number;
   readonly qx: number;
@@ -159,6 +161,7 @@ function bandMeans(waves: readonly BandWave[], N: number): BandMeans {
   const mean = (f: (wave: BandWave) => number): number =>
     waves.reduce((sum, wave) => sum + f(wave), 0) / (N * N);
   return {
+    share: waves.length / (N * N),
     xx: mean(({ kx }) => kx * kx),
     yy: mean(({ ky }) => ky * ky),
     qx: mean(({ kx, q }) => (kx * q) ** 2),
@@ -177,16 +180,19 @@ function bandMeans(waves: readonly BandWave[], N: number): BandMeans {
  * Errors of different channels are independent, and those of a slope and a strain of the same channel cancel by parity.
  */
 function surfaceNoise(
-  { xx, yy, qx, qy, qxx, qyy, qxy }: BandMeans,
+  { share, xx, yy, qx, qy, qxx, qyy, qxy }: BandMeans,
   height: FieldValues,
   east: FieldValues | null,
   north: FieldValues | null,
 ): SurfaceNoise {
-  const h = height.rounding.meanSquare;
+  // Clipping's error is all in the band.
+  const error = ({ rounding: { meanSquare, clipping } }: FieldValues): number =>
+    meanSquare + clipping / share;
+  const h = error(height);
   const called = { Sx: h * xx, Sy: h * yy, east: h * qx, north: h * qy };
   if (east === null || north === null) {
     return { ...called, Dxx: h * qxx, Dyy: h * qyy, Dxy: h * qxy, DxxDyy: h * qxy };
   }
-  const [e, n] = [east.rounding.meanSquare, north.rounding.meanSquare];
+  const [e, n] = [error(east), error(north)];
   return { ...called, Dxx: e * xx, Dyy: n * yy, Dxy: (e * yy + n * xx) / 4, DxxDyy: 0 };
 }

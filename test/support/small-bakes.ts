@@ -42,6 +42,15 @@ const ONE_TILE = [{ patch: 40, resolution: 64 }];
 export const SMALL_SEAS: Readonly<Record<string, Keys>> = Object.freeze({
   plain: {},
   'every map': { maps: EVERY_MAP },
+  // Small, as it is copied and verified over and over: see spoilers.ts. Its depth and slanting seas leave no symmetry.
+  spoilable: {
+    water: { depth: 3 },
+    maps: EVERY_MAP,
+    cascades: [
+      { patch: 24, resolution: 32 },
+      { patch: 5.3, resolution: 16, loop: { frames: 12, frameRate: 4 } },
+    ],
+  },
   'every map, 16 bits': {
     cascades: ONE_TILE,
     maps: {

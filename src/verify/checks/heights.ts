@@ -52,15 +52,17 @@ interface CascadeHeight {
   readonly standing: number;
 }
 
-/** Six standard deviations of a mean of many independent rounding errors. */
+/** Standard deviations of a mean of many independent rounding errors. */
 const DEVIATIONS = 6;
+/** Steps of floats grow with the value: the mean of value^2 error^2 is up to this many times the product of the means. */
+const FLOAT_KURTOSIS = 3;
 
 function cascadeHeight(facts: CascadeFacts, waves: MeasuredWaves): CascadeHeight {
   const { meanSquare, mean, rounding, frameCount } = waves;
   const { shaping } = facts.manifest.sea;
   const variance = meanSquare - mean * mean;
   const samples = frameCount * facts.cascade.resolution ** 2;
-  const error = rounding + 2 * DEVIATIONS * Math.sqrt((variance * rounding) / samples);
+  const error = rounding + 2 * DEVIATIONS * Math.sqrt((FLOAT_KURTOSIS * variance * rounding) / samples);
   const clipped = clippedVariance(facts, variance);
   const height = { variance, rounding: error + clipped + 1e-10 * variance };
   if (shaping.matchHeight) return { ...height, chance: [], standing: 0 };
