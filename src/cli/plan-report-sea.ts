@@ -42,6 +42,8 @@ function latticeField(report: SystemReport): Field {
 
 const UNITS_OF_SUFFIXES: Readonly<Record<string, string>> = {
   RadPerS: ' rad/s',
+  Rad: ' rad',
+  Mps2: ' m/s2',
   Mps: ' m/s',
   M: ' m',
   S: ' s',
@@ -54,7 +56,7 @@ const UNITS_OF_SUFFIXES: Readonly<Record<string, string>> = {
 export function formWords(parameters: { readonly form: string }): string {
   const { form, ...numbers } = parameters;
   const parts = Object.entries(numbers).map(([name, value]) => {
-    const [, stem, suffix = ''] = /^(.+?)(RadPerS|Mps|M|S)?$/.exec(name) as RegExpExecArray;
+    const [, stem, suffix = ''] = /^(.+?)(RadPerS|Rad|Mps2|Mps|M|S)?$/.exec(name) as RegExpExecArray;
     const label = stem
       .replace(/(\d+)p(\d+)$/, ' at $1.$2 m')
       .replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);

@@ -1,4 +1,4 @@
-import type { MapName, SpectrumName, SpreadingName } from './sea.ts';
+import type { GrowthName, MapName, SpectrumName, SpreadingName } from './sea.ts';
 
 // A sea file after the schema: keys as the user wrote them, values in SI and radians, nothing filled in yet.
 
@@ -28,16 +28,26 @@ export interface WaterDocument {
 interface SystemCommonDocument {
   readonly name?: string | undefined;
   readonly from: number;
-  readonly spectrum?: SpectrumName | undefined;
+  readonly spectrum?: SpectrumDocument | undefined;
   readonly peakEnhancement?: number | undefined;
   readonly spreading?: SpreadingDocument | undefined;
+  readonly scaleTo?: number | undefined;
 }
 
-export interface WindSeaDocument extends SystemCommonDocument {
-  readonly kind: 'wind-sea';
+/** The keys of a wind, wherever one can be given. */
+export interface WindDocument {
   readonly windSpeed?: number | undefined;
+  readonly windHeight?: number | undefined;
+  readonly beaufort?: number | undefined;
+}
+
+export interface WindSeaDocument extends SystemCommonDocument, WindDocument {
+  readonly kind: 'wind-sea';
   readonly fetch?: number | undefined;
+  readonly duration?: number | undefined;
+  readonly growth?: GrowthName | undefined;
   readonly significantHeight?: number | undefined;
+  readonly seaState?: number | undefined;
   readonly peakPeriod?: number | undefined;
 }
 
@@ -49,9 +59,16 @@ export interface SwellDocument extends SystemCommonDocument {
 
 export type SystemDocument = WindSeaDocument | SwellDocument;
 
+export interface SpectrumDocument {
+  readonly form: SpectrumName;
+  /** Member of the Ochi-Hubble family; 0 is the most probable. */
+  readonly row?: number | undefined;
+}
+
 export interface SpreadingDocument {
   readonly form?: SpreadingName | undefined;
   readonly s?: number | undefined;
+  readonly width?: number | undefined;
   readonly swellNarrowing?: number | undefined;
 }
 

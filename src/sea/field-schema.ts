@@ -76,7 +76,7 @@ export function wordOr<T>(
 }
 
 /** A whole number within limits. */
-export function wholeNumber(min: number, max: number, description: string): z.ZodType<number> {
+export function wholeNumber(min: number, max: number, description: string): z.ZodType<number, number> {
   const error = checkMessage(`a whole number from ${min} to ${max}`, 'Write it without a fraction or unit.');
   return z.number({ error }).int({ error }).min(min, { error }).max(max, { error }).meta({ description });
 }

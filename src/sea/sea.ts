@@ -26,31 +26,62 @@ interface SystemCommon {
   readonly name: string;
   /** Direction the waves come from: radians clockwise from north, in [0, 2 pi). */
   readonly fromRad: number;
+  /** Significant height the system is brought to, whatever made it, m; null leaves it as it comes. */
+  readonly scaleToM: number | null;
+}
+
+interface FormedCommon extends SystemCommon {
   readonly spectrum: SpectrumName;
+  /** Member of the Ochi-Hubble family, 0 the most probable, 1 .. 10 the others; null with every other spectrum. */
+  readonly spectrumRow: number | null;
   /** Peak enhancement gamma of the JONSWAP family; null leaves it to the growth law or the form's default. */
   readonly peakEnhancement: number | null;
   readonly spreading: SpreadingRequest;
 }
 
 /** A sea raised by the wind over it, by its wind and fetch or by its height and period. */
-export interface WindSeaRequest extends SystemCommon {
+export interface WindSeaRequest extends FormedCommon {
   readonly kind: 'wind-sea';
   readonly growth: WindGrowth | null;
   readonly stated: StatedHeight | null;
-  /** Wind speed at 10 m where it is known beside a stated height (for whitecaps and spreading); else null. */
+  /** Wind speed at 10 m where it is known, also beside a stated height (for whitecaps and spreading); else null. */
   readonly windSpeedMps: number | null;
+  /** The words the wind was given in; null where there is none. */
+  readonly wind: WindWords | null;
+  /** WMO code whose class the stated height stands for; null where the height itself was stated. */
+  readonly seaState: number | null;
+  /** Whether the peak period is the user's, that of a fully developed sea of this height, or the spectrum's own. */
+  readonly periodBy: 'user' | 'full-development' | 'spectrum' | null;
 }
 
+/** A wind as it was given: measured at a height, or by its force on the Beaufort scale. */
+export type WindWords =
+  | { readonly by: 'speed'; readonly speedMps: number; readonly heightM: number }
+  | { readonly by: 'beaufort'; readonly force: number };
+
 /** Waves that have left the wind that raised them. */
-export interface SwellRequest extends SystemCommon {
+export interface SwellRequest extends FormedCommon {
   readonly kind: 'swell';
   readonly stated: StatedHeight;
 }
 
-/** Wind speed at 10 m and fetch; `Infinity` is fully developed. */
+export const GROWTH_NAMES = [
+  'jonswap',
+  'kahma-calkoen',
+  'shore-protection-manual',
+  'wilson',
+  'young-verhagen',
+] as const;
+/** `jonswap` is the experiment's own alpha, peak frequency and gamma; the others give a height and a period. */
+export type GrowthName = (typeof GROWTH_NAMES)[number];
+
+/** Wind speed at 10 m, fetch and duration; `Infinity` is as much as a fully developed sea needs. */
 export interface WindGrowth {
   readonly windSpeedMps: number;
   readonly fetchM: number;
+  readonly durationS: number;
+  /** null leaves it to the spectrum, which has a growth of its own (`elfouhaily`, `pierson-moskowitz`). */
+  readonly law: GrowthName | null;
 }
 
 /** Significant height (4 sqrt m0) in the stated depth, and peak period. */
@@ -59,17 +90,35 @@ export interface StatedHeight {
   readonly peakPeriodS: number;
 }
 
-export const SPECTRUM_NAMES = ['pierson-moskowitz', 'jonswap', 'tma', 'bretschneider'] as const;
+export const SPECTRUM_NAMES = [
+  'pierson-moskowitz',
+  'jonswap',
+  'tma',
+  'bretschneider',
+  'donelan-hamilton-hui',
+  'elfouhaily',
+  'ochi-hubble',
+  'torsethaugen',
+] as const;
 export type SpectrumName = (typeof SPECTRUM_NAMES)[number];
 
-export const SPREADING_NAMES = ['cos-2s', 'mitsuyasu', 'hasselmann'] as const;
+export const SPREADING_NAMES = [
+  'cos-2s',
+  'mitsuyasu',
+  'hasselmann',
+  'donelan-banner',
+  'wrapped-normal',
+  'elfouhaily',
+] as const;
 export type SpreadingName = (typeof SPREADING_NAMES)[number];
 
 export interface SpreadingRequest {
   readonly form: SpreadingName;
-  /** Exponent s of `cos-2s`; null for forms whose s follows from frequency. */
+  /** Exponent s of `cos-2s`; null for the other forms. */
   readonly s: number | null;
-  /** Swell narrowing xi of Horvath 2015, 0..1; adds to s. */
+  /** Standard deviation of `wrapped-normal`, rad; null for the other forms. */
+  readonly widthRad: number | null;
+  /** Swell narrowing xi of Horvath 2015, 0..1; adds to s, and is 0 for forms without one. */
   readonly swellNarrowing: number;
 }
 

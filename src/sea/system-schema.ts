@@ -1,71 +1,21 @@
 import { z } from 'zod';
-import type { SpreadingDocument, SystemDocument } from './document.ts';
-import { checkMessage, choice, quantity, section, wordOr } from './field-schema.ts';
-import { SPECTRUM_NAMES, SPREADING_NAMES } from './sea.ts';
-
-const SPREADING_FORM = choice(
-  SPREADING_NAMES,
-  '`cos-2s` with a fixed s, `mitsuyasu` (1975; needs windSpeed) or `hasselmann` (1980).',
-);
-
-const SPREADING_SCHEMA: z.ZodType<SpreadingDocument> = z
-  .union(
-    [
-      SPREADING_FORM.transform((form): SpreadingDocument => ({ form })),
-      section(
-        {
-          form: SPREADING_FORM.optional(),
-          s: quantity(
-            'ratio',
-            { min: 0, max: 1000, example: '25' },
-            'Exponent of cos-2s: 1 is very broad, 10 a wind sea, 25 to 75 swells of short to long travel.',
-          ).optional(),
-          swellNarrowing: quantity(
-            'ratio',
-            { min: 0, max: 1, example: '0.5' },
-            'Narrowing of long waves (Horvath 2015), 0 to 1; default 0.',
-          ).optional(),
-        },
-        'Spreading with its numbers.',
-      ),
-    ],
-    {
-      error: checkMessage(
-        `one of ${SPREADING_NAMES.join(', ')}, or a group of the keys form, s, swellNarrowing`,
-        'Write for example `spreading: { form: cos-2s, s: 25 }`.',
-      ),
-    },
-  )
-  .meta({
-    description:
-      'How directions spread about the mean; default `hasselmann` for a wind sea, `cos-2s` with s 25 for a swell.',
-  });
+import type { SystemDocument } from './document.ts';
+import { checkMessage, choice, quantity, section, wholeNumber, wordOr } from './field-schema.ts';
+import { GROWTH_NAMES } from './sea.ts';
+import { SPECTRUM_SCHEMA } from './spectrum-schema.ts';
+import { SPREADING_SCHEMA } from './spreading-schema.ts';
 
 const NAME_ERROR = checkMessage(
   'a name of 1 to 40 letters, digits, hyphens and spaces, beginning with a letter or digit',
   'Choose a short name such as `north-swell`.',
 );
 
-const COMMON_FIELDS = {
+const NAME_FIELD = {
   name: z
     .string({ error: NAME_ERROR })
     .regex(/^[A-Za-z0-9][A-Za-z0-9 -]{0,39}$/, { error: NAME_ERROR })
     .meta({ description: 'Name of the system, unique in the sea; default its kind, numbered.' })
     .optional(),
-  from: quantity(
-    'direction',
-    { min: -360, max: 360, example: '250 deg' },
-    'Direction the waves come from: clockwise from north, bare numbers in degrees.',
-  ),
-  spectrum: choice(
-    SPECTRUM_NAMES,
-    'Form of the spectrum; default `jonswap`, but `tma` for a wind sea in water of finite depth.',
-  ).optional(),
-  peakEnhancement: quantity(
-    'ratio',
-    { min: 1, max: 20, example: '3.3' },
-    'Peak enhancement gamma of jonswap and tma; default from the growth law, or 3.3.',
-  ).optional(),
 };
 
 const HEIGHT = { above: 0, max: 40, example: '2.5 m' };
@@ -73,15 +23,51 @@ const PERIOD = { min: 0.1, max: 40, example: '9 s' };
 const HEIGHT_DESCRIPTION =
   'Significant height (four standard deviations of the surface) in the stated depth.';
 
+const SCALE_FIELD = {
+  scaleTo: quantity(
+    'length',
+    HEIGHT,
+    'Significant height the finished system is scaled to in the stated depth, whatever made it.',
+  ).optional(),
+};
+
+const COMMON_FIELDS = {
+  ...NAME_FIELD,
+  from: quantity(
+    'direction',
+    { min: -360, max: 360, example: '250 deg' },
+    'Direction the waves come from: clockwise from north, bare numbers in degrees.',
+  ),
+  spectrum: SPECTRUM_SCHEMA.optional(),
+  peakEnhancement: quantity(
+    'ratio',
+    { min: 1, max: 20, example: '3.3' },
+    'Peak enhancement gamma of jonswap and tma; default from the growth law, for a wind sea of stated height from its ' +
+      'steepness (DNV-RP-C205), for a swell 3.3.',
+  ).optional(),
+  spreading: SPREADING_SCHEMA.optional(),
+  ...SCALE_FIELD,
+};
+
+const WIND_FIELDS = {
+  windSpeed: quantity('speed', { above: 0, max: 60, example: '24 kn' }, 'Wind speed.').optional(),
+  windHeight: quantity(
+    'length',
+    { min: 1, max: 100, example: '19.5 m' },
+    'Height above the sea that windSpeed was measured at; default 10 m.',
+  ).optional(),
+  beaufort: wholeNumber(
+    1,
+    12,
+    'Force of the wind on the Beaufort scale, in place of windSpeed; U10 = .836 B^1.5 m/s.',
+  ).optional(),
+};
+
 const WIND_SEA_SCHEMA = section(
   {
     kind: z.literal('wind-sea').meta({ description: 'A sea raised by the wind over it.' }),
     ...COMMON_FIELDS,
-    windSpeed: quantity(
-      'speed',
-      { above: 0, max: 60, example: '24 kn' },
-      'Wind speed at 10 m height.',
-    ).optional(),
+    ...WIND_FIELDS,
     fetch: wordOr(
       'unlimited',
       Infinity,
@@ -89,11 +75,29 @@ const WIND_SEA_SCHEMA = section(
       '`unlimited` or a fetch above 0 m to 20000000 m (a number in m or text in m, km, cm, mm, ft, nmi)',
       'Length of water the wind has blown over, or `unlimited` (a fully developed sea).',
     ).optional(),
+    duration: quantity(
+      'time',
+      { above: 0, max: 2592000, example: '6 h' },
+      'How long the wind has blown; default long enough.',
+    ).optional(),
+    growth: choice(
+      GROWTH_NAMES,
+      'Law by which wind and fetch raise the sea: `jonswap` (1973, the default), `kahma-calkoen` (1992), ' +
+        '`shore-protection-manual` (1984), `wilson` (1965) or `young-verhagen` (1996, which knows the depth).',
+    ).optional(),
     significantHeight: quantity('length', HEIGHT, HEIGHT_DESCRIPTION).optional(),
-    peakPeriod: quantity('time', PERIOD, 'Period of the spectral peak.').optional(),
-    spreading: SPREADING_SCHEMA.optional(),
+    seaState: wholeNumber(
+      1,
+      9,
+      'State of the sea by WMO code table 3700, in place of significantHeight: the middle of its class.',
+    ).optional(),
+    peakPeriod: quantity(
+      'time',
+      PERIOD,
+      'Period of the spectral peak; beside seaState by default that of a fully developed sea of this height.',
+    ).optional(),
   },
-  'A wind sea: by windSpeed and fetch, or by significantHeight and peakPeriod.',
+  'A wind sea: by windSpeed or beaufort and fetch, or by significantHeight or seaState and peakPeriod.',
 );
 
 const SWELL_SCHEMA = section(
@@ -102,7 +106,6 @@ const SWELL_SCHEMA = section(
     ...COMMON_FIELDS,
     significantHeight: quantity('length', HEIGHT, HEIGHT_DESCRIPTION),
     peakPeriod: quantity('time', PERIOD, 'Period of the spectral peak.'),
-    spreading: SPREADING_SCHEMA.optional(),
   },
   'A swell: by significantHeight and peakPeriod.',
 );

@@ -1,6 +1,13 @@
 import { nyquistWavelengthM } from './cascades.ts';
 import type { Sea, WaveSystemRequest } from './sea.ts';
-import { HEIGHT_PER_DEPTH, metres, peakWavelengthM, STEEP, statedHeightM } from './wave-heights.ts';
+import {
+  HEIGHT_PER_DEPTH,
+  knownHeightM,
+  metres,
+  peakWavelengthM,
+  STEEP,
+  statedHeightM,
+} from './wave-heights.ts';
 
 /** Share of the Nyquist wavenumber above which bilinear filtering loses a tenth of a cascade's slopes. */
 const LARGEST_HEAD_ROOM = 0.85;
@@ -12,6 +19,7 @@ const LEAST_DIMENSIONLESS_FETCH = 10;
 export function seaWarnings(sea: Sea): readonly string[] {
   return [
     ...sea.systems.flatMap((system) => [...steepnessWarnings(system, sea), ...fetchWarnings(system, sea)]),
+    ...sea.systems.flatMap((system) => bothWaysWarnings(system, sea)),
     ...depthWarnings(sea),
     ...cascadeWarnings(sea),
     ...foamWarnings(sea),
@@ -20,7 +28,7 @@ export function seaWarnings(sea: Sea): readonly string[] {
 
 function steepnessWarnings(system: WaveSystemRequest, { water }: Sea): string[] {
   if (!system.stated) return [];
-  const { significantHeightM: Hs } = system.stated;
+  const Hs = knownHeightM(system) as number;
   const wavelength = peakWavelengthM(system.stated, water);
   if (Hs / wavelength <= STEEP[system.kind]) return [];
   const limit = Math.round(1 / STEEP[system.kind]);
@@ -41,6 +49,15 @@ function fetchWarnings(system: WaveSystemRequest, { water }: Sea): string[] {
       `g X / U^2 is ${Number(xHat.toPrecision(2))}, and the growth law was measured above ` +
       `${LEAST_DIMENSIONLESS_FETCH}. Take at least ${metres((LEAST_DIMENSIONLESS_FETCH * U * U) / water.gravityMps2)}, ` +
       'or state the height and period.',
+  ];
+}
+
+function bothWaysWarnings(system: WaveSystemRequest, { shaping }: Sea): string[] {
+  if (system.spreading.form !== 'elfouhaily' || shaping.againstWind < 1) return [];
+  return [
+    `${system.name}: the spreading \`elfouhaily\` cannot tell waves that run with the wind from those against it, and ` +
+      'sends as many either way: the sea will seem to stand. Take out those against it with ' +
+      '`shaping: { againstWind: 0 }`.',
   ];
 }
 

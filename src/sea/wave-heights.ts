@@ -29,9 +29,28 @@ export function peakWavelengthM({ peakPeriodS }: StatedHeight, water: Water): nu
   return (2 * Math.PI) / wavenumber((2 * Math.PI) / peakPeriodS, water);
 }
 
-/** Significant height of all systems whose height is stated, as their energies add up, m. */
+/** A significant height that is known before any formula is applied, and the key that states it. */
+interface KnownHeight {
+  readonly heightM: number;
+  readonly key: 'scaleTo' | 'seaState' | 'significantHeight';
+}
+
+function knownHeight(system: WaveSystemRequest | null): KnownHeight | null {
+  if (system === null) return null;
+  if (system.scaleToM !== null) return { heightM: system.scaleToM, key: 'scaleTo' };
+  if (system.stated === null) return null;
+  const isBySeaState = system.kind === 'wind-sea' && system.seaState !== null;
+  return { heightM: system.stated.significantHeightM, key: isBySeaState ? 'seaState' : 'significantHeight' };
+}
+
+/** The significant height that a system is known to have, m; null where a growth law will tell. */
+export function knownHeightM(system: WaveSystemRequest): number | null {
+  return knownHeight(system)?.heightM ?? null;
+}
+
+/** Significant height of all systems whose height is known, as their energies add up, m. */
 export function statedHeightM(systems: readonly (WaveSystemRequest | null)[]): number {
-  return Math.hypot(...systems.map((system) => system?.stated?.significantHeightM ?? 0));
+  return Math.hypot(...systems.map((system) => knownHeight(system)?.heightM ?? 0));
 }
 
 /** Stated heights that waves of this length cannot have, or that this water is too shallow for. */
@@ -39,11 +58,11 @@ export function heightFindings(systems: readonly (WaveSystemRequest | null)[], w
   const findings: Finding[] = [];
   const highest = HEIGHT_PER_DEPTH.largest * water.depthM;
   systems.forEach((system, i) => {
-    const stated = system?.stated;
-    if (!stated) return;
-    const path = ['systems', i, 'significantHeight'];
-    const { significantHeightM: Hs } = stated;
-    const wavelength = peakWavelengthM(stated, water);
+    const known = knownHeight(system);
+    if (known === null) return;
+    const path = ['systems', i, known.key];
+    const { heightM: Hs } = known;
+    const wavelength = system?.stated ? peakWavelengthM(system.stated, water) : Infinity;
     if (Hs / wavelength > STEEPEST) {
       findings.push({
         path,
@@ -61,7 +80,7 @@ export function heightFindings(systems: readonly (WaveSystemRequest | null)[], w
       });
     }
   });
-  const isOneTooHigh = systems.some((system) => (system?.stated?.significantHeightM ?? 0) > highest);
+  const isOneTooHigh = systems.some((system) => (knownHeight(system)?.heightM ?? 0) > highest);
   const total = statedHeightM(systems);
   if (total > highest && !isOneTooHigh) {
     findings.push({

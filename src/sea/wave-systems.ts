@@ -1,17 +1,11 @@
 import type { Water } from '../physics/water.ts';
-import { SPREADING_DEFAULTS } from './defaults.ts';
-import type { SpreadingDocument, SwellDocument, SystemDocument, WindSeaDocument } from './document.ts';
-import { type DocumentPath, type Finding, valueText } from './findings.ts';
-import type {
-  SpectrumName,
-  SpreadingRequest,
-  SwellRequest,
-  WaveSystemRequest,
-  WindGrowth,
-  WindSeaRequest,
-} from './sea.ts';
-
-const FULL_TURN = 2 * Math.PI;
+import { directionRad } from './direction.ts';
+import type { SwellDocument, SystemDocument } from './document.ts';
+import type { DocumentPath, Finding } from './findings.ts';
+import type { SwellRequest, WaveSystemRequest } from './sea.ts';
+import { checkSpectrumNumbers, checkSwellSpectrum } from './spectra.ts';
+import { resolvedSpreading } from './spreading.ts';
+import { resolvedWindSea } from './wind-sea.ts';
 
 /**
  * The wave systems of a document, each with its name and defaults; null in place of one that cannot be resolved (or
@@ -58,93 +52,6 @@ function systemNames(documents: readonly (SystemDocument | null)[], findings: Fi
   });
 }
 
-function resolvedWindSea(
-  document: WindSeaDocument,
-  name: string,
-  water: Water | null,
-  path: DocumentPath,
-  findings: Finding[],
-): WindSeaRequest | null {
-  const { windSpeed, fetch, significantHeight, peakPeriod } = document;
-  const before = findings.length;
-  // Depth matters to a wind sea's form: TMA is JONSWAP that feels the bottom, and equals it in deep water.
-  const spectrum = document.spectrum ?? (water !== null && water.depthM !== Infinity ? 'tma' : 'jonswap');
-  const isFullyDeveloped = spectrum === 'pierson-moskowitz';
-  const isStated = significantHeight !== undefined || peakPeriod !== undefined;
-
-  if (isStated && fetch !== undefined) {
-    findings.push({
-      path,
-      expected: 'either windSpeed and fetch, or significantHeight and peakPeriod',
-      found: 'a fetch beside a stated height or period',
-      remedy: 'Remove fetch, or significantHeight and peakPeriod.',
-    });
-  } else if (isStated) {
-    for (const key of ['significantHeight', 'peakPeriod'] as const) {
-      if (document[key] !== undefined) continue;
-      const expected = 'significantHeight and peakPeriod together';
-      findings.push({ path: [...path, key], expected, found: 'nothing', remedy: `Add ${key}.` });
-    }
-  } else if (windSpeed === undefined) {
-    findings.push({
-      path: [...path, 'windSpeed'],
-      expected: 'windSpeed and fetch, or significantHeight and peakPeriod',
-      found: fetch === undefined ? 'neither' : 'fetch alone',
-      remedy: 'Add for example `windSpeed: 20 kn` and `fetch: 50 km`.',
-    });
-  } else if (fetch === undefined && !isFullyDeveloped) {
-    findings.push({
-      path: [...path, 'fetch'],
-      expected: 'the fetch beside the wind speed',
-      found: 'nothing',
-      remedy: 'Add for example `fetch: 50 km`, or `fetch: unlimited` for a fully developed sea.',
-    });
-  }
-  if (isFullyDeveloped && (isStated || (fetch !== undefined && fetch !== Infinity))) {
-    findings.push({
-      path: [...path, 'spectrum'],
-      expected: 'a spectrum that takes a height and period or a fetch',
-      found: '`pierson-moskowitz`, which knows only the wind speed of a fully developed sea',
-      remedy: isStated ? 'Use `bretschneider`, the same shape.' : 'Use `jonswap`, or `fetch: unlimited`.',
-    });
-  }
-  if (spectrum === 'bretschneider' && !isStated) {
-    findings.push({
-      path: [...path, 'spectrum'],
-      expected: 'a significantHeight and peakPeriod for `bretschneider`',
-      found: 'a wind speed',
-      remedy: 'State the height and period, or use `jonswap`.',
-    });
-  }
-  checkPeakEnhancement(document, spectrum, path, findings);
-  const spreading = resolvedSpreading(
-    document.spreading,
-    'wind-sea',
-    windSpeed !== undefined,
-    path,
-    findings,
-  );
-  if (findings.length > before) return null;
-
-  const growth: WindGrowth | null = isStated
-    ? null
-    : { windSpeedMps: windSpeed as number, fetchM: fetch ?? Infinity };
-  const stated = isStated
-    ? { significantHeightM: significantHeight as number, peakPeriodS: peakPeriod as number }
-    : null;
-  return {
-    kind: 'wind-sea',
-    name,
-    fromRad: directionRad(document.from),
-    spectrum,
-    peakEnhancement: document.peakEnhancement ?? null,
-    spreading,
-    growth,
-    stated,
-    windSpeedMps: windSpeed ?? null,
-  };
-}
-
 function resolvedSwell(
   document: SwellDocument,
   name: string,
@@ -152,17 +59,11 @@ function resolvedSwell(
   findings: Finding[],
 ): SwellRequest | null {
   const before = findings.length;
-  const spectrum = document.spectrum ?? 'jonswap';
-  if (spectrum === 'pierson-moskowitz') {
-    findings.push({
-      path: [...path, 'spectrum'],
-      expected: 'a spectrum that takes a height and period',
-      found: '`pierson-moskowitz`, which knows only the wind speed of a fully developed sea',
-      remedy: 'Use `bretschneider`, the same shape.',
-    });
-  }
-  checkPeakEnhancement(document, spectrum, path, findings);
-  const spreading = resolvedSpreading(document.spreading, 'swell', false, path, findings);
+  const spectrum = document.spectrum?.form ?? 'jonswap';
+  checkSwellSpectrum(spectrum, path, findings);
+  checkSpectrumNumbers(document, spectrum, path, findings);
+  const context = { kind: 'swell', spectrum, isWindKnown: false } as const;
+  const spreading = resolvedSpreading(document.spreading, context, path, findings);
   if (findings.length > before) return null;
   const { significantHeight: significantHeightM, peakPeriod: peakPeriodS } = document;
   return {
@@ -170,62 +71,10 @@ function resolvedSwell(
     name,
     fromRad: directionRad(document.from),
     spectrum,
+    spectrumRow: null,
     peakEnhancement: document.peakEnhancement ?? null,
     spreading,
+    scaleToM: document.scaleTo ?? null,
     stated: { significantHeightM, peakPeriodS },
   };
-}
-
-function checkPeakEnhancement(
-  { peakEnhancement }: SystemDocument,
-  spectrum: SpectrumName,
-  path: DocumentPath,
-  findings: Finding[],
-): void {
-  if (peakEnhancement === undefined || spectrum === 'jonswap' || spectrum === 'tma') return;
-  findings.push({
-    path: [...path, 'peakEnhancement'],
-    expected: 'no peak enhancement for this spectrum',
-    found: `${valueText(peakEnhancement)} with \`${spectrum}\``,
-    remedy: 'Remove it, or use `jonswap` or `tma`.',
-  });
-}
-
-function resolvedSpreading(
-  document: SpreadingDocument | undefined,
-  kind: SystemDocument['kind'],
-  isWindKnown: boolean,
-  path: DocumentPath,
-  findings: Finding[],
-): SpreadingRequest {
-  // Naming an exponent asks for the form that has one.
-  const natural = kind === 'swell' || document?.s !== undefined ? 'cos-2s' : 'hasselmann';
-  const form = document?.form ?? natural;
-  const swellNarrowing = document?.swellNarrowing ?? SPREADING_DEFAULTS.swellNarrowing;
-  if (form !== 'cos-2s' && document?.s !== undefined) {
-    findings.push({
-      path: [...path, 'spreading', 's'],
-      expected: `no exponent for \`${form}\`, whose s follows from frequency`,
-      found: valueText(document.s),
-      remedy: 'Remove it, or use `form: cos-2s`.',
-    });
-  }
-  if (form === 'mitsuyasu' && !isWindKnown) {
-    findings.push({
-      path: [...path, 'spreading'],
-      expected: 'a windSpeed for `mitsuyasu`',
-      found: 'none',
-      remedy: kind === 'swell' ? 'Use `form: cos-2s` for a swell.' : 'Add windSpeed, or use `hasselmann`.',
-    });
-  }
-  const fixedS = kind === 'swell' ? SPREADING_DEFAULTS.swellS : SPREADING_DEFAULTS.windSeaS;
-  return { form, s: form === 'cos-2s' ? (document?.s ?? fixedS) : null, swellNarrowing };
-}
-
-/** A direction in [0, 2 pi). */
-export function directionRad(direction: number): number {
-  const turned = direction % FULL_TURN;
-  // Added only where needed: the sum is rounded. 360 deg and -0 come out as 0 exactly.
-  const positive = turned < 0 ? turned + FULL_TURN : turned;
-  return positive >= FULL_TURN || positive === 0 ? 0 : positive;
 }

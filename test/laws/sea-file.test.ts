@@ -22,7 +22,26 @@ const FULL_SEA = {
     current: { speed: 1, toward: 90 },
   },
   systems: [
-    { kind: 'wind-sea', name: 'a', from: 200, windSpeed: '16 kn', fetch: '80 km', spreading: 'mitsuyasu' },
+    {
+      kind: 'wind-sea',
+      name: 'a',
+      from: 200,
+      windSpeed: '16 kn',
+      windHeight: 12,
+      fetch: '80 km',
+      duration: '9 h',
+      growth: 'wilson',
+      spreading: 'mitsuyasu',
+    },
+    {
+      kind: 'wind-sea',
+      from: 190,
+      beaufort: 4,
+      seaState: 3,
+      spectrum: { form: 'ochi-hubble', row: 3 },
+      spreading: { form: 'wrapped-normal', width: 30 },
+      scaleTo: 0.4,
+    },
     {
       kind: 'wind-sea',
       from: 210,

@@ -77,3 +77,11 @@ test('a fetch too short for its wind is a warning', () => {
     ),
   ]);
 });
+
+test('a spreading that runs both ways is told, unless one way was taken out', () => {
+  const both = sea('  - { kind: wind-sea, from: 0, windSpeed: 10, fetch: 20 km, spreading: elfouhaily }\n');
+  expect(seaWarnings(parseSea(both))).toEqual([
+    expect.stringMatching(/^wind-sea: .* either way.*againstWind: 0/),
+  ]);
+  expect(seaWarnings(parseSea(`${both}shaping: { againstWind: 0 }\n`))).toEqual([]);
+});

@@ -15,11 +15,16 @@ describe('what a system may leave out', () => {
         name: 'wind-sea',
         fromRad: (250 * Math.PI) / 180,
         spectrum: 'jonswap',
+        spectrumRow: null,
         peakEnhancement: null,
-        spreading: { form: 'hasselmann', s: null, swellNarrowing: 0 },
-        growth: { windSpeedMps: 10, fetchM: 20000 },
+        spreading: { form: 'hasselmann', s: null, widthRad: null, swellNarrowing: 0 },
+        scaleToM: null,
+        growth: { windSpeedMps: 10, fetchM: 20000, durationS: Infinity, law: 'jonswap' },
         stated: null,
         windSpeedMps: 10,
+        wind: { by: 'speed', speedMps: 10, heightM: 10 },
+        seaState: null,
+        periodBy: null,
       },
     ]);
   });
@@ -37,7 +42,11 @@ describe('what a system may leave out', () => {
 
   test('a swell is narrow', () => {
     expect(systems('  - { kind: swell, from: 0, significantHeight: 1, peakPeriod: 10 }')).toMatchObject([
-      { name: 'swell', spectrum: 'jonswap', spreading: { form: 'cos-2s', s: 25, swellNarrowing: 0 } },
+      {
+        name: 'swell',
+        spectrum: 'jonswap',
+        spreading: { form: 'cos-2s', s: 25, widthRad: null, swellNarrowing: 0 },
+      },
     ]);
   });
 
@@ -59,14 +68,48 @@ describe('what a system may leave out', () => {
   });
 
   test.each([
-    ['hasselmann', { form: 'hasselmann', s: null, swellNarrowing: 0 }],
-    ['{ swellNarrowing: 0.4 }', { form: 'hasselmann', s: null, swellNarrowing: 0.4 }],
-    ['{ s: 12 }', { form: 'cos-2s', s: 12, swellNarrowing: 0 }],
-    ['cos-2s', { form: 'cos-2s', s: 10, swellNarrowing: 0 }],
-    ['mitsuyasu', { form: 'mitsuyasu', s: null, swellNarrowing: 0 }],
+    ['hasselmann', { form: 'hasselmann', s: null, widthRad: null, swellNarrowing: 0 }],
+    ['{ swellNarrowing: 0.4 }', { form: 'hasselmann', s: null, widthRad: null, swellNarrowing: 0.4 }],
+    ['{ s: 12 }', { form: 'cos-2s', s: 12, widthRad: null, swellNarrowing: 0 }],
+    ['cos-2s', { form: 'cos-2s', s: 10, widthRad: null, swellNarrowing: 0 }],
+    ['mitsuyasu', { form: 'mitsuyasu', s: null, widthRad: null, swellNarrowing: 0 }],
   ])('spreading %s', (text, spreading) => {
     const lines = `  - { kind: wind-sea, from: 0, windSpeed: 10, fetch: 20 km, spreading: ${text} }`;
     expect(systems(lines)[0].spreading).toEqual(spreading);
+  });
+
+  test.each([
+    ['wrapped-normal', 'wind-sea', Math.sqrt(-2 * Math.log(10 / 11))],
+    ['{ width: 20 deg }', 'wind-sea', (20 * Math.PI) / 180],
+    ['{ form: wrapped-normal, width: 20 }', 'wind-sea', (20 * Math.PI) / 180],
+    ['wrapped-normal', 'swell', Math.sqrt(-2 * Math.log(25 / 26))],
+  ])('spreading %s of a %s', (text, kind, widthRad) => {
+    const lines = `  - { kind: ${kind}, from: 0, significantHeight: 1, peakPeriod: 6, spreading: ${text} }`;
+    const [{ spreading }] = systems(lines);
+    expect(spreading).toMatchObject({ form: 'wrapped-normal', s: null });
+    expect(spreading.widthRad).toBeCloseTo(widthRad, 14);
+  });
+
+  test('elfouhaily brings its own spreading, others do not', () => {
+    const lines = '  - { kind: wind-sea, from: 0, windSpeed: 10, fetch: 20 km, spectrum: elfouhaily }';
+    expect(systems(lines)).toMatchObject([
+      { spreading: { form: 'elfouhaily' }, growth: { law: null }, spectrumRow: null },
+    ]);
+    const other = '  - { kind: wind-sea, from: 0, windSpeed: 10, fetch: 20 km, spreading: elfouhaily }';
+    expect(systems(other)).toMatchObject([{ spectrum: 'jonswap', spreading: { form: 'elfouhaily' } }]);
+  });
+
+  test.each([
+    ['ochi-hubble', 0],
+    ['{ form: ochi-hubble }', 0],
+    ['{ form: ochi-hubble, row: most-probable }', 0],
+    ['{ form: ochi-hubble, row: 10 }', 10],
+  ])('spectrum %s is row %d, at its own peak', (text, row) => {
+    const [system] = systems(`  - { kind: wind-sea, from: 0, significantHeight: 7, spectrum: ${text} }`);
+    expect(system).toMatchObject({ spectrum: 'ochi-hubble', spectrumRow: row, periodBy: 'spectrum' });
+    // Row 0 of 7 m: omega_m1 = .70 exp(-.046 * 7) = .507 rad/s is the higher peak; row 10: .62 exp(-.039 * 7) = .472.
+    const peak = row === 0 ? 0.507 : 0.472;
+    expect(Math.abs((2 * Math.PI) / (system.stated?.peakPeriodS ?? 0) / peak - 1)).toBeLessThan(0.01);
   });
 
   test('names are numbered and never taken twice', () => {
@@ -89,7 +132,68 @@ describe('what a system may leave out', () => {
   });
 });
 
+describe('the words people are given', () => {
+  test('a Beaufort force is a wind on the open sea', () => {
+    const [system] = systems('  - { kind: wind-sea, from: 0, beaufort: 6 }');
+    // .836 * 6^1.5 = 12.287 (Stewart 2008).
+    expect(system).toMatchObject({
+      wind: { by: 'beaufort', force: 6 },
+      growth: { fetchM: Infinity, durationS: Infinity, law: 'jonswap' },
+    });
+    expect(system.kind === 'wind-sea' && system.windSpeedMps?.toFixed(3)).toBe('12.287');
+    expect(systems('  - { kind: wind-sea, from: 0, beaufort: 6, fetch: 20 km }')).toMatchObject([
+      { growth: { fetchM: 20000 } },
+    ]);
+  });
+
+  test('a wind at another height is brought to 10 m', () => {
+    // 10 + (.3808 / .4) ln 1.95 = 10.636 m/s with the friction velocity of Wu 1982 at 10 m/s.
+    const [system] = systems(
+      '  - { kind: wind-sea, from: 0, windSpeed: 10.636, windHeight: 19.5 m, fetch: 20 km }',
+    );
+    expect(system).toMatchObject({ wind: { by: 'speed', speedMps: 10.636, heightM: 19.5 } });
+    expect(system.kind === 'wind-sea' && system.growth?.windSpeedMps.toFixed(3)).toBe('10.000');
+  });
+
+  test('at 10 m a wind is what it is, to the bit', () => {
+    const lines = '  - { kind: wind-sea, from: 0, windSpeed: 7.3, windHeight: 10 m, fetch: 20 km }';
+    expect(systems(lines)).toMatchObject([{ windSpeedMps: 7.3 }]);
+  });
+
+  test.each([
+    [1, 0.05],
+    [2, 0.3],
+    [5, 3.25],
+    [8, 11.5],
+    [9, 14],
+  ])('sea state %d is a height of %f m, as flat as wind makes it', (code, height) => {
+    const [system] = systems(`  - { kind: wind-sea, from: 0, seaState: ${code} }`);
+    expect(system).toMatchObject({ seaState: code, periodBy: 'full-development', growth: null });
+    expect(system.stated?.significantHeightM).toBeCloseTo(height, 12);
+    // Hs = .24133 U^2 / g and Tp = 7.5188 U / g: Tp = 15.305 sqrt(Hs / g).
+    expect((system.stated?.peakPeriodS ?? 0) / Math.sqrt(height / 9.80665)).toBeCloseTo(15.305, 3);
+  });
+
+  test('a sea state keeps the period it is given', () => {
+    const lines = '  - { kind: wind-sea, from: 0, seaState: 5, peakPeriod: 8, beaufort: 6 }';
+    expect(systems(lines)).toMatchObject([
+      { stated: { significantHeightM: 3.25, peakPeriodS: 8 }, periodBy: 'user', growth: null },
+    ]);
+  });
+
+  test('duration, growth law and the height to scale to', () => {
+    const wind = 'kind: wind-sea, from: 0, windSpeed: 10';
+    expect(systems(`  - { ${wind}, duration: 6 h, growth: wilson, scaleTo: 2.5 m }`)).toMatchObject([
+      { growth: { fetchM: Infinity, durationS: 21600, law: 'wilson' }, scaleToM: 2.5 },
+    ]);
+    expect(
+      systems('  - { kind: swell, from: 0, significantHeight: 1, peakPeriod: 10, scaleTo: 2 }'),
+    ).toMatchObject([{ stated: { significantHeightM: 1 }, scaleToM: 2 }]);
+  });
+});
+
 describe('systems that cannot be', () => {
+  const wind = 'kind: wind-sea, from: 0, windSpeed: 10, fetch: 9 km';
   const swell = 'kind: swell, from: 0, significantHeight: 1, peakPeriod: 10';
   test.each([
     ['kind: wind-sea, from: 0, windSpeed: 10', '.fetch', /fetch beside/, /unlimited/],
@@ -152,6 +256,68 @@ describe('systems that cannot be', () => {
       /height/,
       /bretschneider/,
     ],
+    [`${wind}, beaufort: 6`, '.beaufort', /either windSpeed or beaufort/, /Remove one/],
+    ['kind: wind-sea, from: 0, beaufort: 0', '.beaufort', /from 1 to 12/, /without a fraction/],
+    ['kind: wind-sea, from: 0, beaufort: 13', '.beaufort', /from 1 to 12/, /without a fraction/],
+    ['kind: wind-sea, from: 0, beaufort: 6, windHeight: 5 m', '.windHeight', /a windSpeed/, /Remove it/],
+    ['kind: wind-sea, from: 0, seaState: 4, windHeight: 5 m', '.windHeight', /a windSpeed/, /windSpeed/],
+    [`${wind}, windHeight: 0.5 m`, '.windHeight', /from 1 to 100 m/, /19.5 m/],
+    [
+      'kind: wind-sea, from: 0, windSpeed: 55, windHeight: 2 m, fetch: 9 km',
+      '.windSpeed',
+      /at most .* 60 m\/s at 10 m/,
+      /Check/,
+    ],
+    ['kind: wind-sea, from: 0, duration: 3 h', '.windSpeed', /windSpeed and fetch/, /windSpeed: 20 kn/],
+    [`${wind}, growth: jonswop`, '.growth', /one of jonswap/, /Did you mean `jonswap`/],
+    [`${wind}, spectrum: elfouhaily, growth: wilson`, '.growth', /has its own/, /Remove it/],
+    [`${wind}, spectrum: torsethaugen`, '.spectrum', /significantHeight and peakPeriod/, /jonswap/],
+    [`${wind}, spectrum: ochi-hubble`, '.spectrum', /a significantHeight for/, /jonswap/],
+    [`${wind}, spectrum: { row: 3 }`, '.spectrum.form', /one of pierson-moskowitz/, /Add `form`/],
+    [`${wind}, spectrum: { form: tma, row: 3 }`, '.spectrum.row', /no row/, /ochi-hubble/],
+    [`${wind}, spectrum: { form: ochi-hubble, row: 11 }`, '.spectrum.row', /1 to 10/, /without a fraction/],
+    ['kind: wind-sea, from: 0, seaState: 0', '.seaState', /from 1 to 9/, /without a fraction/],
+    [
+      'kind: wind-sea, from: 0, seaState: 4, significantHeight: 2, peakPeriod: 6',
+      '.seaState',
+      /either/,
+      /one/,
+    ],
+    ['kind: wind-sea, from: 0, seaState: 4, duration: 3 h', '', /either/, /Remove duration/],
+    ['kind: wind-sea, from: 0, seaState: 4, growth: wilson', '', /either/, /Remove growth/],
+    [
+      'kind: wind-sea, from: 0, significantHeight: 4, peakPeriod: 9, spectrum: ochi-hubble',
+      '.peakPeriod',
+      /follow from the height/,
+      /torsethaugen/,
+    ],
+    [
+      'kind: wind-sea, from: 0, significantHeight: 4, peakPeriod: 9, spectrum: elfouhaily, beaufort: 6',
+      '.spectrum',
+      /height and period/,
+      /scaleTo/,
+    ],
+    [
+      'kind: wind-sea, from: 0, significantHeight: 1, peakPeriod: 5, spectrum: donelan-hamilton-hui',
+      '.spectrum',
+      /age of the sea/,
+      /windSpeed/,
+    ],
+    [`${swell}, spectrum: ochi-hubble`, '.spectrum', /height and period/, /wind-sea/],
+    [`${swell}, spectrum: donelan-hamilton-hui`, '.spectrum', /height and period/, /wind-sea/],
+    [`${swell}, spreading: elfouhaily`, '.spreading', /windSpeed/, /cos-2s/],
+    [`${swell}, spreading: { form: cos-2s, width: 20 }`, '.spreading.width', /no width/, /wrapped-normal/],
+    [`${swell}, spreading: { width: 200 }`, '.spreading.width', /from 1 to 120/, /25 deg/],
+    [
+      `${swell}, spreading: { form: donelan-banner, swellNarrowing: 0.5 }`,
+      '.spreading.swellNarrowing',
+      /no exponent/,
+      /hasselmann/,
+    ],
+    [`${swell}, scaleTo: 0`, '.scaleTo', /above 0/, /2.5 m/],
+    // 10 s waves are 156 m long: a seventh is 22.3 m.
+    [`${swell}, scaleTo: 23`, '.scaleTo', /at most 22\.3 m/, /steeper/],
+    ['kind: wind-sea, from: 0, seaState: 8, peakPeriod: 5', '.seaState', /at most 5\.57 m/, /steeper/],
     ['kind: tide, from: 0', '.kind', /one of wind-sea, swell/, /which kind/],
     ['from: 0', '.kind', /one of wind-sea, swell/, /Add `kind`/],
   ])('%s', (text, path, expected, remedy) => {
