@@ -36,20 +36,39 @@ const EVERY_MAP: Keys = {
   foam: { format: 'png', bits: 16 },
 };
 
+/** Narrow, on a tile with many of its waves, so that its direction is known well. */
+export const MANY_WAVES_SYSTEM = {
+  kind: 'wind-sea',
+  from: 235,
+  significantHeight: 0.35,
+  peakPeriod: 2.4,
+  windSpeed: 7,
+  spreading: { form: 'cos-2s', s: 40 },
+} as const;
+
 const ONE_TILE = [{ patch: 40, resolution: 64 }];
 
 /** What each small bake changes of `SMALL_SEA_KEYS`; `undefined` removes a key. */
 export const SMALL_SEAS: Readonly<Record<string, Keys>> = Object.freeze({
   plain: {},
   'every map': { maps: EVERY_MAP },
-  // Small, as it is copied and verified over and over: see spoilers.ts. Its depth and slanting seas leave no symmetry.
+  // Small, as it is copied and verified over and over: see spoilers.ts. Depth and direction leave no symmetry, and frames
+  // follow closely enough that steps in time tell something.
   spoilable: {
     water: { depth: 3 },
     maps: EVERY_MAP,
+    loop: { frames: 16, frameRate: 5 },
     cascades: [
       { patch: 24, resolution: 32 },
-      { patch: 5.3, resolution: 16, loop: { frames: 12, frameRate: 4 } },
+      { patch: 5.3, resolution: 16, loop: { frames: 8, frameRate: 5 } },
     ],
+  },
+  'many waves': {
+    systems: [MANY_WAVES_SYSTEM],
+    cascades: [{ patch: 90, resolution: 64 }],
+    loop: { frames: 16, frameRate: 5 },
+    maps: { displacement: { format: 'exr', sample: 'float' } },
+    foam: 'off',
   },
   'every map, 16 bits': {
     cascades: ONE_TILE,
