@@ -1,23 +1,24 @@
 /*
- * Contributor notes. Constants and the search come from a numerical study of tilings (kept with the project's design
- * notes; figures in DEVELOPERS.md, "Decisions"): half of Nyquist leaves 4 texels on the shortest wave, below which
- * bilinear sampling loses slope fast; five waves across a tile at its long end is where tiling stops being seen from
- * above; a fade of 1.25 each way spans two cells of the finer tile at that point.
+ * Contributor notes. Constants and the search come from a numerical study of tilings (figures in DEVELOPERS.md,
+ * "Decisions"; its plans in test/published/cascade-plans.test.ts): half of Nyquist leaves 4 texels on the shortest wave,
+ * below which bilinear sampling loses slope fast; five waves across a tile at its long end is where tiling stops being
+ * seen from above; a fade of 1.25 each way spans two cells of the finer tile at that point.
  */
 import type { AutoCascades, ListedCascade, ListedCascades, Loop, Sea } from '../sea/sea.ts';
 import type { Band, BandBorder } from '../waves/band.ts';
 import { nyquistWavenumber } from '../waves/lattice.ts';
 import { type RadialTable, radialIntegral } from '../waves/radial-table.ts';
 import { patchLengthFor, zeroCellShare } from './longest-patch.ts';
+import { fourDigits, unrelatedRatio, writtenPatch } from './patch-ratios.ts';
 
 /** Half-width of the border between two cascades, as a factor on k. */
 export const BORDER_FADE = 1.25;
 /** Waves across a finer patch at the long end of its band. */
 export const WAVES_ACROSS = 5;
+/** Neighbouring patches closer than this share most of their waves: one of them is wasted. */
+const LEAST_RATIO = 1.5;
 /** Bands placed by hand that overlap by less than this factor count as touching. */
 const NARROWEST_OVERLAP = 1.2;
-/** Largest denominator looked at when patch ratios are kept away from simple fractions. */
-const LARGEST_DENOMINATOR = 12;
 /** A patch whose k = 0 cell holds more than this share of m0 is lengthened. */
 const ZERO_CELL_SHARE = 0.005;
 
@@ -53,19 +54,23 @@ function plannedLayouts(
   tables: readonly RadialTable[],
 ): readonly CascadeLayout[] {
   const { resolution: N, headRoom: h } = request;
-  const patches = [request.longestPatchM ?? longestPatch(tables)];
+  const first = request.longestPatchM ?? longestPatch(tables);
+  const [ideal, written] = [[first], [first]];
   const largestRatio = largestPatchRatio(N, h);
-  while (patches.length < request.count) {
-    const shortestSoFar = (2 * patches[patches.length - 1]) / (h * N);
+  while (ideal.length < request.count) {
+    const last = ideal[ideal.length - 1];
+    const shortestSoFar = (2 * last) / (h * N);
     if (shortestSoFar <= 1.05 * request.shortestWavelengthM) break;
-    const remaining = request.count - patches.length;
-    const equalRatio = (shortestSoFar / request.shortestWavelengthM) ** (1 / remaining);
-    const ratio = Math.min(equalRatio, largestRatio);
-    if (ratio < 1.5) break;
-    patches.push(unrelatedPatch(patches, ratio));
+    // Equal steps for what is left, in as few cascades as keep them wide.
+    const whole = shortestSoFar / request.shortestWavelengthM;
+    const steps = Math.min(request.count - ideal.length, Math.floor(Math.log(whole) / Math.log(LEAST_RATIO)));
+    const ratio = Math.min(whole ** (1 / Math.max(1, steps)), largestRatio);
+    if (ratio < LEAST_RATIO) break;
+    ideal.push(last / unrelatedRatio(ideal, ratio));
+    written.push(writtenPatch(ideal[ideal.length - 1], written));
   }
   let low: BandBorder | null = null;
-  return patches.map((patchLengthM, c) => {
+  return written.map((patchLengthM, c) => {
     const kMax = h * nyquistWavenumber({ patchLengthM, resolution: N });
     const high: BandBorder = { kRadPerM: kMax / BORDER_FADE, fade: BORDER_FADE };
     const layout = { patchLengthM, resolution: N, band: { low, high }, loop: request.loops[c] ?? loop };
@@ -83,52 +88,19 @@ function longestPatch(tables: readonly RadialTable[]): number {
   return fourDigits(L);
 }
 
-/**
- * The next patch, m: shorter than the last by a ratio in [0.9 R, R], as far from simple fractions with every longer
- * patch as can be, leaning slightly to the larger ratio. Tiles whose lengths share a small multiple line up and repeat
- * together. Lengths are judged as they will be written: rounding alone can bring two in line.
- */
-function unrelatedPatch(patches: readonly number[], R: number): number {
-  const last = patches[patches.length - 1];
-  let best = last / R;
-  let bestScore = -Infinity;
-  for (let step = 0; step <= 50; step++) {
-    const r = (0.9 + 0.002 * step) * R;
-    const candidate = fourDigits(last / r);
-    let distance = Infinity;
-    for (const patch of patches) distance = Math.min(distance, distanceToFractions(patch / candidate));
-    const score = distance + (0.02 * r) / R;
-    if (score > bestScore) {
-      best = candidate;
-      bestScore = score;
-    }
-  }
-  return best;
-}
-
-/** min over q = 1..12 of q * |q R - nearest whole number|; 0 for R a fraction with a denominator up to 12. */
-export function distanceToFractions(R: number): number {
-  let distance = Infinity;
-  for (let q = 1; q <= LARGEST_DENOMINATOR; q++) {
-    distance = Math.min(distance, q * Math.abs(q * R - Math.round(q * R)));
-  }
-  return distance;
-}
-
-/** Lengths are rounded to four digits, so that a shader can carry them as written. */
-function fourDigits(value: number): number {
-  return Number(value.toPrecision(4));
-}
-
 function listedLayouts(request: ListedCascades, loop: Loop): readonly CascadeLayout[] {
   const { list, headRoom } = request;
-  let low = outerLow(list[0], headRoom);
+  let low = list[0].longestWavelengthM === null ? null : lowerBorder(list[0], headRoom);
   return list.map((cascade, c) => {
-    const next = c + 1 < list.length ? sharedBorder(cascade, list[c + 1], headRoom) : null;
-    const high = inOrder(next?.high ?? upperBorder(cascade, headRoom), low);
+    const finer = list.at(c + 1);
+    const end = finer === undefined ? upperBorder(cascade, headRoom) : borderTo(finer, cascade, headRoom);
+    const high = inOrder(end, low);
     const { patchLengthM, resolution } = cascade;
     const layout = { patchLengthM, resolution, band: { low, high }, loop: cascade.loop ?? loop };
-    low = inOrder(next?.low ?? high, high);
+    // A gap between neighbours stays one, each side fading inside its own band.
+    const begin =
+      finer === undefined || finer.longestWavelengthM === null ? high : lowerBorder(finer, headRoom);
+    low = isGap(high, begin) ? begin : high;
     return layout;
   });
 }
@@ -163,30 +135,15 @@ function lowerBorder(cascade: ListedCascade, headRoom: number): BandBorder {
   return { kRadPerM: bandBottom(cascade) * fade, fade };
 }
 
-function outerLow(cascade: ListedCascade, headRoom: number): BandBorder | null {
-  return cascade.longestWavelengthM === null ? null : lowerBorder(cascade, headRoom);
-}
-
 /**
- * The border between two neighbours placed by hand. Bands that overlap cross-fade over their whole overlap; bands that
- * touch (or a finer band left open) share a standard border that ends where the longer patch ends; a gap stays a gap,
- * each side fading inside its own band.
+ * The border between two neighbours placed by hand. Bands that overlap cross-fade over their whole overlap; those that
+ * do not (or a finer band left open) meet in a standard border that ends where the longer one ends.
  */
-function sharedBorder(
-  longer: ListedCascade,
-  finer: ListedCascade,
-  headRoom: number,
-): { readonly high: BandBorder; readonly low: BandBorder } {
-  const upper = upperBorder(longer, headRoom);
-  if (finer.longestWavelengthM === null) return { high: upper, low: upper };
+function borderTo(finer: ListedCascade, longer: ListedCascade, headRoom: number): BandBorder {
   const kBottom = bandBottom(finer);
   const kTop = Math.min(bandTop(longer, headRoom), bandTop(finer, headRoom));
-  if (kTop / kBottom >= NARROWEST_OVERLAP) {
-    const shared = borderBetween(kBottom, kTop);
-    return { high: shared, low: shared };
-  }
-  if (kBottom <= bandTop(longer, headRoom) * 1.001) return { high: upper, low: upper };
-  return { high: upper, low: lowerBorder(finer, headRoom) };
+  const overlaps = finer.longestWavelengthM !== null && kTop / kBottom >= NARROWEST_OVERLAP;
+  return overlaps ? borderBetween(kBottom, kTop) : upperBorder(longer, headRoom);
 }
 
 /**
@@ -202,6 +159,11 @@ function inOrder(border: BandBorder, before: BandBorder | null): BandBorder {
   return borderBetween(Math.max(from, leastFrom), Math.max(to, leastTo));
 }
 
+/** Whether one border begins clearly beyond where the other ends. */
+function isGap(high: BandBorder, low: BandBorder): boolean {
+  return low.kRadPerM / low.fade > high.kRadPerM * high.fade * 1.001;
+}
+
 /** The border that fades over the wavenumbers from .. to, rad/m. */
 function borderBetween(from: number, to: number): BandBorder {
   return { kRadPerM: Math.sqrt(from * to), fade: Math.sqrt(to / from) };
@@ -213,12 +175,11 @@ export function bandGaps(layouts: readonly CascadeLayout[]): readonly BandGap[] 
   for (let c = 1; c < layouts.length; c++) {
     const { high } = layouts[c - 1].band;
     const { low } = layouts[c].band;
-    if (low === null) continue;
-    const kTop = high.kRadPerM * high.fade;
-    const kBottom = low.kRadPerM / low.fade;
-    if (kBottom > kTop * 1.001) {
-      gaps.push({ longestWavelengthM: (2 * Math.PI) / kTop, shortestWavelengthM: (2 * Math.PI) / kBottom });
-    }
+    if (low === null || !isGap(high, low)) continue;
+    gaps.push({
+      longestWavelengthM: (2 * Math.PI) / (high.kRadPerM * high.fade),
+      shortestWavelengthM: ((2 * Math.PI) / low.kRadPerM) * low.fade,
+    });
   }
   return gaps;
 }
