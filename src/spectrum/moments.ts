@@ -38,7 +38,8 @@ export function spectralMoment(
   const widest = defaultLimits(spectrum);
   const a = Math.log(limits.fromRadPerS > 0 ? limits.fromRadPerS : widest.fromRadPerS);
   const b = Math.log(limits.toRadPerS < Infinity ? limits.toRadPerS : widest.toRadPerS);
-  const breakpoints = BENDS.map((bend) => Math.log(bend * spectrum.omegaPeak)).filter((x) => x > a && x < b);
+  const bends = spectrum.knots ?? BENDS.map((bend) => bend * spectrum.omegaPeak);
+  const breakpoints = bends.map((omega) => Math.log(omega)).filter((x) => x > a && x < b);
   const integrand = (lnOmega: number): number => {
     const omega = Math.exp(lnOmega);
     return omega ** (order + 1) * spectrum.density(omega);

@@ -15,6 +15,8 @@ import { type JonswapParameters, jonswap } from './jonswap.ts';
 import { type MitsuyasuParameters, mitsuyasu } from './mitsuyasu.ts';
 import { type OchiHubbleParameters, ochiHubble } from './ochi-hubble.ts';
 import { type PiersonMoskowitzParameters, piersonMoskowitz } from './pierson-moskowitz.ts';
+import { type TabulatedParameters, tabulated } from './tabulated.ts';
+import { type TabulatedSpreadingParameters, tabulatedSpreading } from './tabulated-spreading.ts';
 import { type TmaParameters, tma } from './tma.ts';
 import { type TorsethaugenParameters, torsethaugen } from './torsethaugen.ts';
 import { type WrappedNormalParameters, wrappedNormal } from './wrapped-normal.ts';
@@ -29,6 +31,7 @@ export interface SpectrumForms {
   elfouhaily: ElfouhailyParameters;
   'ochi-hubble': OchiHubbleParameters;
   torsethaugen: TorsethaugenParameters;
+  tabulated: TabulatedParameters;
 }
 
 /** The parameters of a published directional spreading, by its form. */
@@ -39,6 +42,7 @@ export interface SpreadingForms {
   'donelan-banner': DonelanBannerParameters;
   'wrapped-normal': WrappedNormalParameters;
   elfouhaily: ElfouhailySpreadingParameters;
+  tabulated: TabulatedSpreadingParameters;
 }
 
 export type SpectrumForm = keyof SpectrumForms;
@@ -65,6 +69,7 @@ const SPECTRUM_BUILDERS: { readonly [F in SpectrumForm]: SpectrumBuilder<Spectru
   elfouhaily,
   'ochi-hubble': ochiHubble,
   torsethaugen,
+  tabulated,
 };
 
 const SPREADING_BUILDERS: { readonly [F in SpreadingForm]: SpreadingBuilder<SpreadingForms[F]> } = {
@@ -74,6 +79,7 @@ const SPREADING_BUILDERS: { readonly [F in SpreadingForm]: SpreadingBuilder<Spre
   'donelan-banner': donelanBanner,
   'wrapped-normal': wrappedNormal,
   elfouhaily: elfouhailySpreading,
+  tabulated: tabulatedSpreading,
 };
 
 /** The published forms there are, in the order of registration. */
@@ -88,9 +94,9 @@ export const SPREADING_FORMS: readonly SpreadingForm[] = Object.freeze(
 export function frequencySpectrum(parameters: SpectrumParameters, water: Water): FrequencySpectrum {
   // The table's type pairs every builder with its own parameters; the compiler cannot follow that through a key.
   const build = SPECTRUM_BUILDERS[parameters.form] as SpectrumBuilder<SpectrumParameters>;
-  const { form, density, omegaPeak } = build(parameters, water);
+  const spectrum = build(parameters, water);
   const { energyFactor } = parameters;
-  return { form, omegaPeak, density: (omega) => energyFactor * density(omega) };
+  return { ...spectrum, density: (omega) => energyFactor * spectrum.density(omega) };
 }
 
 /** The directional spreading of some parameters. */

@@ -16,7 +16,7 @@ export interface DirectionalSpectrum {
   readonly spreadingParameter: (kRadPerM: number) => number;
   /** Factor that makes `spreadingShape` integrate to 1 over the circle at this p. */
   readonly spreadingNormaliser: (p: number) => number;
-  /** Unnormalised spreading at an angle from the mean direction, rad in [-pi, pi]. */
+  /** Unnormalised spreading at an angle from the system's direction of travel, rad in [-pi, pi]. */
   readonly spreadingShape: (theta: number, p: number) => number;
   /** Angular frequency of the peak of S before any gain, and the wavenumber of that frequency in this water. */
   readonly omegaPeakRadPerS: number;
@@ -61,12 +61,27 @@ export function directionalSpectrum(
   };
 }
 
-/** Angle from the mean direction at which the spreading of the peak has first fallen to a half, rad; at most pi. */
+/** Angles at which the highest lobe of a measured spreading is looked for. */
+const LOBE_SEARCH = 720;
+
+/** Angle from its highest lobe at which the spreading of the peak has first fallen to a half, rad; at most pi. */
 export function peakHalfWidth(spectrum: DirectionalSpectrum): number {
   const p = spectrum.spreadingParameter(spectrum.peakWavenumberRadPerM);
+  const shape = (theta: number): number => spectrum.spreadingShape(theta, p);
+  let lobe = 0;
+  for (let i = 0; i < LOBE_SEARCH; i++) {
+    const theta = ((i + 0.5) / LOBE_SEARCH) * 2 * Math.PI - Math.PI;
+    if (shape(theta) > shape(lobe)) lobe = theta;
+  }
+  const half = 0.5 * shape(lobe);
   let theta = 1e-4;
-  while (theta < Math.PI && spectrum.spreadingShape(theta, p) > 0.5) theta *= 1.1;
+  while (theta < Math.PI && shape(wrapped(lobe + theta)) > half && shape(wrapped(lobe - theta)) > half)
+    theta *= 1.1;
   return Math.min(theta, Math.PI);
+}
+
+function wrapped(theta: number): number {
+  return theta - 2 * Math.PI * Math.round(theta / (2 * Math.PI));
 }
 
 /** Product of all gains at a wavenumber, squared: what energy is multiplied by. */

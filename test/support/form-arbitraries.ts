@@ -38,6 +38,30 @@ const elfouhailyWind = {
   frictionVelocityMps: between(0.01, 3),
 };
 
+/** Frequencies of a table, Hz, ascending in steps of any width. */
+const frequencyHz = fc
+  .tuple(between(0.02, 0.1), fc.array(between(0.003, 0.1), { minLength: 2, maxLength: 12 }))
+  .map(([first, steps]) => {
+    const list = [first];
+    for (const step of steps) list.push(list[list.length - 1] + step);
+    return list;
+  });
+
+/** Moments of a distribution of two lobes, or now and then what noise makes of them: moments that no distribution has. */
+const circularMoments = fc
+  .record({
+    r: between(0, 0.98),
+    at: between(-Math.PI, Math.PI),
+    r2: between(0, 1),
+    at2: between(-Math.PI, Math.PI),
+  })
+  .map(({ r, at, r2, at2 }) => ({
+    cos1: r * Math.cos(at),
+    sin1: r * Math.sin(at),
+    cos2: r2 * Math.cos(at2),
+    sin2: r2 * Math.sin(at2),
+  }));
+
 /** Parameters for every registered spectrum: a new form does not compile until it is here, and so meets all laws. */
 export const SPECTRUM_ARBITRARIES: { readonly [F in SpectrumForm]: fc.Arbitrary<SpectrumForms[F]> } = {
   'pierson-moskowitz': fc.record({
@@ -75,6 +99,16 @@ export const SPECTRUM_ARBITRARIES: { readonly [F in SpectrumForm]: fc.Arbitrary<
     significantHeightM: fc.oneof(fc.constant(0), spread(0.1, 20)),
     omegaPeakRadPerS: between(2, 24).map((Tp) => (2 * Math.PI) / Tp),
   }),
+  tabulated: frequencyHz.chain((frequencies) =>
+    fc.record({
+      form: fc.constant('tabulated' as const),
+      frequencyHz: fc.constant(frequencies),
+      densityM2PerHz: fc.array(fc.oneof(fc.constant(0), between(0, 50)), {
+        minLength: frequencies.length,
+        maxLength: frequencies.length,
+      }),
+    }),
+  ),
 };
 
 /** Parameters for every registered spreading. */
@@ -107,4 +141,16 @@ export const SPREADING_ARBITRARIES: { readonly [F in SpreadingForm]: fc.Arbitrar
     ...elfouhailyWind,
     gravityMps2: between(1, 25),
   }),
+  tabulated: frequencyHz.chain((frequencies) =>
+    fc
+      .array(circularMoments, { minLength: frequencies.length, maxLength: frequencies.length })
+      .map((moments) => ({
+        form: 'tabulated' as const,
+        frequencyHz: frequencies,
+        cos1: moments.map(({ cos1 }) => cos1),
+        sin1: moments.map(({ sin1 }) => sin1),
+        cos2: moments.map(({ cos2 }) => cos2),
+        sin2: moments.map(({ sin2 }) => sin2),
+      })),
+  ),
 };
