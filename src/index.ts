@@ -78,6 +78,8 @@ export {
   plannedBakeOf,
 } from './plan/plan-bake.ts';
 export { isPlanText, parsePlan, planText } from './plan/plan-text.ts';
+export { CONTACT_SHEET_DEFAULTS, type ContactSheetOptions, contactSheet } from './report/contact-sheet.ts';
+export { verifyReportLines } from './report/verify-text.ts';
 export {
   CASCADES_DEFAULTS,
   FOAM_DEFAULTS,
@@ -128,6 +130,15 @@ export type {
 } from './sea/sea.ts';
 export type { SpectrumParameters, SpreadingParameters } from './spectrum/registry.ts';
 export { writeFileAtomic } from './store/atomic-file.ts';
+export type { CheckResult, VerifyReport } from './verify/report.ts';
+export type { MeasuredStatistics } from './verify/statistics.ts';
+export {
+  VERIFY_DEFAULTS,
+  type VerifyExtent,
+  type VerifyOptions,
+  type VerifyProgress,
+  verifyBake,
+} from './verify/verify-bake.ts';
 export { CAUTION, OUTPUT_VERSION, VERSION } from './version.ts';
 export type { Band, BandBorder } from './waves/band.ts';
 export type { FieldDeviations } from './waves/field-deviations.ts';

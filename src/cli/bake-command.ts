@@ -1,19 +1,16 @@
 import { join } from 'node:path';
 import { type Command, InvalidArgumentError, Option } from 'commander';
-import { BAKE_DEFAULTS, bake, machineThreads } from '../index.ts';
+import { BAKE_DEFAULTS, bake, machineThreads, verifyBake } from '../index.ts';
 import { bakeJson, bakeSummary } from './bake-summary.ts';
 import { coloursOf } from './colours.ts';
+import { type FrameRange, frameRange } from './frame-range.ts';
 import { type ProgramIo, say, writeResult } from './io.ts';
 import { printPlan } from './plan-command.ts';
 import { warningLines } from './plan-report.ts';
 import { plannedInput } from './planned-input.ts';
-import { bakeProgress } from './progress.ts';
+import { progressDisplay } from './progress.ts';
 import { stoppable } from './stoppable.ts';
-
-interface FrameRange {
-  readonly first: number;
-  readonly last: number;
-}
+import { requirePassed } from './verdict.ts';
 
 interface BakeCommandOptions {
   readonly output?: string;
@@ -24,6 +21,7 @@ interface BakeCommandOptions {
   readonly quiet?: boolean;
   readonly json?: boolean;
   readonly force?: boolean;
+  readonly verify: boolean;
 }
 
 /** More threads than any machine has are a slip of the finger. */
@@ -47,6 +45,7 @@ export function defineBakeCommand(command: Command, io: ProgramIo): void {
     .option('-q, --quiet', 'no progress, warnings and summary')
     .option('--json', 'print the result as JSON')
     .option('-f, --force', "replace another plan's bake in the folder")
+    .option('--no-verify', 'leave out the quick checks of the finished files')
     .action((sea: string, options: BakeCommandOptions) => runBake(io, sea, options));
 }
 
@@ -58,7 +57,7 @@ async function runBake(io: ProgramIo, sea: string, options: BakeCommandOptions):
 
   const { warnings } = plan.report;
   if (!quiet && warnings.length > 0) say(io, warningLines(warnings, coloursOf(io.stderr, io.env)).join('\n'));
-  const progress = await bakeProgress(io, quiet);
+  const progress = await progressDisplay(io, quiet);
   const announce = (signal: string): void => {
     progress.end();
     say(io, `${signal}: stopping after the frames in flight; once more stops at once.`);
@@ -77,20 +76,16 @@ async function runBake(io: ProgramIo, sea: string, options: BakeCommandOptions):
       progress.end();
     }
   });
+  // Of the files as they lie on the disk; the full set is the command `verify`.
+  const checked =
+    result.manifest === null || !options.verify ? null : await verifyBake(result.folder, { checks: 'quick' });
   if (json) await writeResult(io.stdout, bakeJson(result));
-  else if (!quiet) await writeResult(io.stdout, bakeSummary(plan, result));
+  else if (!quiet) await writeResult(io.stdout, bakeSummary(plan, result, checked));
+  if (checked !== null) requirePassed(checked);
 }
 
 function threadCount(text: string): number {
   const count = Number(text);
   if (/^\d+$/.test(text) && count <= MOST_THREADS) return count;
   throw new InvalidArgumentError(`Expected a whole number from 0 to ${MOST_THREADS}.`);
-}
-
-/** `10-20`, or `10` for one frame; a loop may begin below zero: `-5-3`. */
-function frameRange(text: string): FrameRange {
-  const match = /^(-?\d{1,9})(?:-(-?\d{1,9}))?$/.exec(text);
-  if (match === null) throw new InvalidArgumentError('Expected first-last, for example 1-48.');
-  const first = Number(match[1]);
-  return { first, last: match[2] === undefined ? first : Number(match[2]) };
 }

@@ -1,10 +1,14 @@
-import type { BakeResult, Manifest, Plan } from '../index.ts';
+import type { BakeResult, Manifest, Plan, VerifyReport } from '../index.ts';
 import { threadWords } from './plan-report-cost.ts';
 import { type Field, fieldLines } from './table.ts';
 import { byteSize, counted, duration, metres, percent, rounded } from './wording.ts';
 
 /** What was baked, what it holds, what was lost, where it is and how long it took. */
-export function bakeSummary(plan: Plan, { folder, manifest, run }: BakeResult): string {
+export function bakeSummary(
+  plan: Plan,
+  { folder, manifest, run }: BakeResult,
+  checked: VerifyReport | null,
+): string {
   const made = `${counted(run.framesMade, 'frame')} made${run.framesReused === 0 ? '' : `, ${run.framesReused} reused`}`;
   const cascades = plan.cascades
     .map(({ id, resolution }) => `${id} ${resolution} x ${resolution}`)
@@ -13,6 +17,7 @@ export function bakeSummary(plan: Plan, { folder, manifest, run }: BakeResult): 
   const fields: Field[] = [
     ['baked', `${plan.title}: ${maps}; ${cascades}; ${counted(plan.loop.frameCount, 'frame')} a loop`],
     ...(manifest === null ? [] : resultFields(manifest)),
+    ...(checked === null ? [] : [['checked', checkedWords(checked)] as const]),
     ['files', `${folder}${manifest === null ? ' (some frames only: no foam, no manifest yet)' : ''}`],
     [
       'took',
@@ -34,6 +39,14 @@ function resultFields({ statistics, losses, files, cascades }: Manifest): Field[
     ...clippedFields(cascades),
     ['size', `${counted(files.length, 'file')}, ${byteSize(bytes)}`],
   ];
+}
+
+/** The quick checks of the finished files. */
+function checkedWords({ checks }: VerifyReport): string {
+  const judged = checks.filter(({ passed }) => passed !== null);
+  const failed = judged.filter(({ passed }) => passed === false).length;
+  const outcome = failed === 0 ? 'all passed' : `${failed} failed`;
+  return `${counted(judged.length, 'quick check')}, ${outcome}; loopswell verify makes all of them`;
 }
 
 function lossWords({

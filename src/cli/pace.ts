@@ -1,12 +1,16 @@
 import type { BakeStage } from '../index.ts';
 import { duration, rounded } from './wording.ts';
 
-export const STAGE_WORDS: Readonly<Record<BakeStage, string>> = {
+/** What a progress display can be about. */
+export type ShownStage = BakeStage | 'verify';
+
+export const STAGE_WORDS: Readonly<Record<ShownStage, string>> = {
   check: 'checked',
   survey: 'ranges',
   frames: 'frames',
   'foam-level': 'foam level',
   foam: 'foam',
+  verify: 'verified',
 };
 
 /** A moment of a stage: when, and how much was done. */

@@ -28,6 +28,18 @@ const COMMANDS: readonly CommandEntry[] = [
     load: async () => (await import('./plan-command.ts')).definePlanCommand,
   },
   {
+    name: 'verify',
+    summary: 'Prove a finished bake from its files alone.',
+    usage: '[options] <bake>',
+    load: async () => (await import('./verify-command.ts')).defineVerifyCommand,
+  },
+  {
+    name: 'sheet',
+    summary: 'Draw a finished bake as one picture.',
+    usage: '[options] <bake>',
+    load: async () => (await import('./sheet-command.ts')).defineSheetCommand,
+  },
+  {
     name: 'presets',
     summary: 'List the seas that come along, or print one to start from.',
     usage: '[name]',

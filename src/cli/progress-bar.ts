@@ -1,7 +1,6 @@
 import { SingleBar } from 'cli-progress';
-import type { BakeStage } from '../index.ts';
 import type { ProgramIo } from './io.ts';
-import { paceOf, paceWords, STAGE_WORDS } from './pace.ts';
+import { paceOf, paceWords, type ShownStage, STAGE_WORDS } from './pace.ts';
 import type { ProgressDisplay } from './progress.ts';
 
 /** A bar on a terminal, one a stage, cleared when the bake is done. */
@@ -16,7 +15,7 @@ export function progressBar(io: ProgramIo): ProgressDisplay {
     // Signals are the command's own business.
     gracefulExit: false,
   });
-  let stage: BakeStage | null = null;
+  let stage: ShownStage | null = null;
   let pace = paceOf({ timeS: 0, done: 0 });
   let ended = false;
   return {

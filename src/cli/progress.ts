@@ -1,10 +1,16 @@
-import type { BakeProgress, BakeStage } from '../index.ts';
 import { isTerminal, type ProgramIo, say } from './io.ts';
-import { paceOf, paceWords, STAGE_WORDS } from './pace.ts';
+import { paceOf, paceWords, type ShownStage, STAGE_WORDS } from './pace.ts';
 
-/** Shows how far a bake is. */
+/** How far a stage is. */
+export interface ShownProgress {
+  readonly stage: ShownStage;
+  readonly done: number;
+  readonly total: number;
+}
+
+/** Shows how far a bake or a verification is. */
 export interface ProgressDisplay {
-  readonly update: (progress: BakeProgress) => void;
+  readonly update: (progress: ShownProgress) => void;
   /** Ends the display; later updates are not shown. May be called twice. */
   readonly end: () => void;
 }
@@ -13,7 +19,7 @@ export interface ProgressDisplay {
 const LINE_EVERY_S = 30;
 
 /** How progress is shown here: a bar on a terminal, else a line now and then, or not at all. */
-export async function bakeProgress(io: ProgramIo, quiet: boolean): Promise<ProgressDisplay> {
+export async function progressDisplay(io: ProgramIo, quiet: boolean): Promise<ProgressDisplay> {
   if (quiet) return { update() {}, end() {} };
   if (!isTerminal(io.stderr, io.env)) return progressLines(io);
   const { progressBar } = await import('./progress-bar.ts');
@@ -22,7 +28,7 @@ export async function bakeProgress(io: ProgramIo, quiet: boolean): Promise<Progr
 
 /** Lines for a log: nothing in the first half minute. */
 export function progressLines(io: ProgramIo): ProgressDisplay {
-  let stage: BakeStage | null = null;
+  let stage: ShownStage | null = null;
   let pace = paceOf({ timeS: 0, done: 0 });
   let lastLine = io.secondsNow();
   let ended = false;

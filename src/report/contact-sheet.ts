@@ -2,11 +2,11 @@ import sharp from 'sharp';
 import type { DecodedImage } from '../codec/codec.ts';
 import { codecFor } from '../codec/registry.ts';
 import { LARGEST_CODE } from '../image/image.ts';
-import type { Manifest, ManifestCascade, ManifestChannel, ManifestMap } from '../manifest/manifest.ts';
+import { framePath } from '../manifest/frame-path.ts';
+import type { ManifestCascade, ManifestChannel, ManifestMap } from '../manifest/manifest.ts';
 import { numberFromHalf } from '../math/half.ts';
-
-/** One file of a bake, for whoever draws it; the sheet itself reads no disk. */
-export type FrameBytes = (path: string) => Uint8Array;
+import { fileBytes } from '../store/bake-folder.ts';
+import { soundManifest } from '../verify/manifest-file.ts';
 
 export interface ContactSheetOptions {
   /** Side of one picture, pixels. */
@@ -28,14 +28,13 @@ const BACKGROUND = { r: 24, g: 27, b: 31 };
  * speeds, slopes and strains are grey around zero with one scale for all frames of a channel; their last channel (up,
  * where there is one) is shown. Normals are shown as stored, foam and J as grey.
  *
+ * @param folder folder of a finished bake
  * @returns bytes of a PNG
+ * @throws InputError where the folder's manifest or a file is not sound; ReadWriteError where one cannot be read
  */
-export async function contactSheet(
-  manifest: Manifest,
-  read: FrameBytes,
-  options: ContactSheetOptions = {},
-): Promise<Uint8Array> {
+export async function contactSheet(folder: string, options: ContactSheetOptions = {}): Promise<Uint8Array> {
   const { cell, frames } = { ...CONTACT_SHEET_DEFAULTS, ...options };
+  const manifest = soundManifest(folder);
   const pictures: { input: Buffer; left: number; top: number }[] = [];
   let width = 0;
   for (const [row, cascade] of manifest.cascades.entries()) {
@@ -43,7 +42,7 @@ export async function contactSheet(
     const top = GAP + row * (cell + GAP);
     for (const map of Object.values(cascade.maps)) {
       for (const path of sampledPaths(cascade, map, frames)) {
-        const image = codecFor(map.format).decode(read(path), path);
+        const image = codecFor(map.format).decode(fileBytes(folder, path), path);
         const pixels = visiblePixels(image, map);
         const input = await sharp(pixels, { raw: { width: image.width, height: image.height, channels: 3 } })
           .resize(cell, cell, { kernel: 'lanczos3' })
@@ -66,10 +65,7 @@ function sampledPaths(cascade: ManifestCascade, map: ManifestMap, frames: number
   const { firstFrame, frameCount } = cascade.loop;
   const count = Math.min(frames, frameCount);
   return Array.from({ length: count }, (_, i) => {
-    const frameNumber = firstFrame + Math.floor((i * frameCount) / count);
-    return map.pattern.replace(/%0(\d+)d/, (_match, digits: string) =>
-      String(frameNumber).padStart(Number(digits), '0'),
-    );
+    return framePath(map.pattern, firstFrame + Math.floor((i * frameCount) / count));
   });
 }
 

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { paceOf, paceWords } from '../../../src/cli/pace.ts';
-import { bakeProgress, progressLines } from '../../../src/cli/progress.ts';
+import { progressDisplay, progressLines } from '../../../src/cli/progress.ts';
 import { type CapturedIo, CapturedStream, capturedIo } from './captured-io.ts';
 
 /** An outside world whose clock is set by hand. */
@@ -67,7 +67,7 @@ describe('progress on a terminal', () => {
 
   it('is a bar for each stage, cleared at the end', async () => {
     const { io, clock } = clocked(new CapturedStream({ isTTY: true }));
-    const progress = await bakeProgress(io, false);
+    const progress = await progressDisplay(io, false);
     progress.update({ stage: 'frames', done: 10, total: 40 });
     clock.timeS += 4;
     progress.update({ stage: 'frames', done: 20, total: 40 });
@@ -92,7 +92,7 @@ describe('progress on a terminal', () => {
       [{}, true],
     ] as const) {
       const io = capturedIo({ stderr: new CapturedStream({ isTTY: true }), env });
-      const progress = await bakeProgress(io, quiet);
+      const progress = await progressDisplay(io, quiet);
       progress.update({ stage: 'frames', done: 1, total: 2 });
       progress.end();
       expect(io.stderr.text).toBe('');
