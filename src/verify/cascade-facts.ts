@@ -8,7 +8,7 @@ import type { BakeFacts } from './bake-facts.ts';
 import type { SeenFrame } from './frame-reader.ts';
 import { dispersionTurns } from './measured-waves.ts';
 import { type PlaneTransform, planeTransform } from './plane-transform.ts';
-import { type Surface, surfaceMaker } from './surface.ts';
+import { heightOf, type Surface, surfaceMaker } from './surface.ts';
 import { type TargetWaves, targetWaves } from './target-waves.ts';
 import { wavesOfCascade } from './waves-of-manifest.ts';
 
@@ -65,6 +65,8 @@ export function cascadeFacts(bake: BakeFacts, c: number, keyedFrames: readonly n
     waves: once(() => wavesOfCascade(manifest, c)),
     target: once(() => targetWaves(bake.request, request, turns())),
     surface(frame) {
+      // Memory is taken once there is a frame of that size.
+      if (heightOf(frame) === null) return null;
       if (last?.frame !== frame) last = { frame, surface: maker()(frame) };
       return last.surface;
     },

@@ -46,9 +46,7 @@ export function fieldStore(cascade: ManifestCascade, rowZero: ManifestConvention
       return (quantity) => {
         const before = made.get(quantity);
         if (before !== undefined) return before;
-        const values = buffers.get(quantity) ?? new Float64Array(N * N);
-        const field = decodedField(values, quantity, files, N, rowZero);
-        if (field !== null) buffers.set(quantity, values);
+        const field = decodedField(buffers, quantity, files, N, rowZero);
         made.set(quantity, field);
         return field;
       };
@@ -57,7 +55,7 @@ export function fieldStore(cascade: ManifestCascade, rowZero: ManifestConvention
 }
 
 function decodedField(
-  values: Float64Array,
+  buffers: Map<Quantity, Float64Array>,
   quantity: Quantity,
   files: readonly SeenFile[],
   N: number,
@@ -66,6 +64,9 @@ function decodedField(
   for (const { planned, image } of files) {
     const channel = planned.channels.find((candidate) => candidate.quantity === quantity);
     if (channel === undefined || image === null) continue;
+    // Memory is taken once there is an image of that size.
+    const values = buffers.get(quantity) ?? new Float64Array(N * N);
+    buffers.set(quantity, values);
     const plane = image.planes[image.channels.indexOf(channel.name)];
     const { extremes, ...rounding } = fillValues(values, plane, planned, channel);
     if (rowZero === 'north') turnOver(values, N);

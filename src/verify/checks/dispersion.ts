@@ -1,4 +1,5 @@
 import type { Check } from '../check.ts';
+import { engineNoise } from '../rounding.ts';
 import { notApplicable, verdict } from '../verdict.ts';
 
 /**
@@ -10,14 +11,15 @@ export const DISPERSION: Check = {
   name: 'dispersion',
   question: 'Does every wave move at the speed of its length, depth and current?',
   quick: false,
-  begin() {
+  begin({ manifest }) {
+    const engine = engineNoise(manifest.generator.engine);
     return {
       cascade() {
         return {
           verdicts({ waves, withoutWaves }) {
             if (waves === null) return [notApplicable(withoutWaves)];
             const { meanSquare, onShell, rounding } = waves;
-            const allowed = ROUNDING_MARGIN * (rounding / meanSquare) + SUMMATION;
+            const allowed = ROUNDING_MARGIN * (rounding / meanSquare) + SUMMATION + engine * engine;
             return [
               verdict(
                 1 - onShell / meanSquare,

@@ -3,6 +3,7 @@ import type { CascadeFacts } from '../cascade-facts.ts';
 import { exponentialSumBounds, FALSE_ALARM_RATE } from '../chance.ts';
 import type { Check } from '../check.ts';
 import { isStanding, type MeasuredWaves } from '../measured-waves.ts';
+import { engineNoise } from '../rounding.ts';
 import { answering, type Limit, notApplicable, type Verdict, verdict } from '../verdict.ts';
 
 /**
@@ -54,6 +55,8 @@ interface CascadeHeight {
 
 /** Standard deviations of a mean of many independent rounding errors. */
 const DEVIATIONS = 6;
+/** Sums of millions of squares. */
+const SUMMATION = 1e-10;
 /** Steps of floats grow with the value: the mean of value^2 error^2 is up to this many times the product of the means. */
 const FLOAT_KURTOSIS = 3;
 
@@ -64,7 +67,8 @@ function cascadeHeight(facts: CascadeFacts, waves: MeasuredWaves): CascadeHeight
   const samples = frameCount * facts.cascade.resolution ** 2;
   const error = rounding + 2 * DEVIATIONS * Math.sqrt((FLOAT_KURTOSIS * variance * rounding) / samples);
   const clipped = clippedVariance(facts, variance);
-  const height = { variance, rounding: error + clipped + 1e-10 * variance };
+  const engine = 2 * engineNoise(facts.manifest.generator.engine) + SUMMATION;
+  const height = { variance, rounding: error + clipped + engine * variance };
   if (shaping.matchHeight) return { ...height, chance: [], standing: 0 };
   const target = facts.target().variance;
   if (shaping.amplitudes === 'gaussian')
