@@ -123,6 +123,11 @@ function loopWarnings({ report }: Omit<Plan, 'hash'>): string[] {
 
 function foamWarnings({ cascades, foam, water, shaping }: Omit<Plan, 'hash'>): string[] {
   const warnings: string[] = [];
+  if (foam !== null && cascades.every((cascade) => cascade.foam === null)) {
+    warnings.push(
+      'No cascade holds waves of a metre or more, which is where foam comes from: the foam map is left out. State foam.shares to have it.',
+    );
+  }
   for (const cascade of cascades) {
     if (cascade.foam !== null && cascade.foam.loopResidue > Math.exp(-DECAY_TIMES) * 1.001) {
       warnings.push(
