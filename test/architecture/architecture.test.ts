@@ -133,7 +133,7 @@ describe('the rules', () => {
       'a module of Node outside its door',
       'math/a.ts',
       "import { readFileSync } from 'node:fs';\n",
-      'src/math/a.ts:1 imports node:fs, whose door is store/, sea/load.ts',
+      'src/math/a.ts:1 imports node:fs, whose door is store/, sea/load.ts, kernel/kernel-binary.ts',
     ],
     [
       'a package without a door',

@@ -90,7 +90,7 @@ const DOORS: Readonly<Record<string, readonly string[]>> = {
   'cli-progress': ['cli/'],
   yaml: ['sea/'],
   zod: ['sea/', 'manifest/'],
-  'node:fs': ['store/', 'sea/load.ts'],
+  'node:fs': ['store/', 'sea/load.ts', 'kernel/kernel-binary.ts'],
   'node:path': ['store/', 'sea/load.ts', 'bake/', 'verify/', 'report/', 'cli/'],
   'node:worker_threads': ['bake/thread-executor.ts', 'bake/worker.ts'],
   'node:zlib': ['codec/'],
