@@ -1,0 +1,47 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { resolvedSystems, travelDirection } from '../../../src/plan/systems.ts';
+import { seaOf, swellKeys, windSeaKeys } from '../../support/planned-seas.ts';
+
+const DEGREE = Math.PI / 180;
+
+describe('travelDirection', () => {
+  it.each([
+    ['west', 270, 0],
+    ['south', 180, 90],
+    ['east', 90, 180],
+    ['north', 0, -90],
+    ['south-west', 225, 45],
+    ['north-west', 315, -45],
+    ['360 degrees', 360, -90],
+  ])('from the %s', (_, bearing, toward) => {
+    expect(travelDirection(bearing * DEGREE)).toBeCloseTo(toward * DEGREE, 12);
+  });
+
+  it('is opposite to where the waves come from, in (-pi, pi]', () => {
+    fc.assert(
+      fc.property(fc.double({ min: 0, max: 2 * Math.PI, noNaN: true }), (fromRad) => {
+        const toward = travelDirection(fromRad);
+        // A bearing has its east component in the sine, its north in the cosine.
+        expect(Math.cos(toward)).toBeCloseTo(-Math.sin(fromRad), 12);
+        expect(Math.sin(toward)).toBeCloseTo(-Math.cos(fromRad), 12);
+        expect(toward > -Math.PI && toward <= Math.PI).toBe(true);
+      }),
+      { numRuns: 1000 },
+    );
+  });
+});
+
+describe('resolved systems', () => {
+  it('carry their direction, and lose head sea only where wind made them', () => {
+    const systems = [
+      { ...windSeaKeys(10, 20), from: 250 },
+      { ...swellKeys(9, 3.3, 25), from: 10 },
+    ];
+    const [windSea, swell] = resolvedSystems(seaOf(systems, { shaping: { againstWind: 0.2 } }));
+    expect(windSea.fromRad).toBeCloseTo(250 * DEGREE, 12);
+    expect(windSea.towardRad).toBeCloseTo(20 * DEGREE, 12);
+    expect(swell.towardRad).toBeCloseTo(-100 * DEGREE, 12);
+    expect([windSea.againstShare, swell.againstShare]).toEqual([0.2, 1]);
+  });
+});
