@@ -1,7 +1,12 @@
 import { InputError } from '../errors.ts';
 import type { Manifest, ManifestSystem } from '../manifest/manifest.ts';
 import type { Current, Water } from '../physics/water.ts';
-import { SPECTRUM_FORMS, SPREADING_FORMS } from '../spectrum/registry.ts';
+import {
+  directionalSpreading,
+  frequencySpectrum,
+  SPECTRUM_FORMS,
+  SPREADING_FORMS,
+} from '../spectrum/registry.ts';
 import { type CascadeRequest, type SeaWavesRequest, seaWaves } from '../waves/cascade-waves.ts';
 import type { CascadeWaves } from '../waves/wave-amplitudes.ts';
 import { MANIFEST_PATH } from './manifest-file.ts';
@@ -24,12 +29,15 @@ export function currentOfManifest({ sea: { water } }: Manifest): Current {
  */
 export function wavesRequest(manifest: Manifest): SeaWavesRequest {
   const { sea } = manifest;
+  const water = waterOfManifest(manifest);
   sea.systems.forEach((system, s) => {
     requireKnownForm(system.spectrum, SPECTRUM_FORMS, `sea.systems.${s}.spectrum`);
     requireKnownForm(system.spreading, SPREADING_FORMS, `sea.systems.${s}.spreading`);
+    requireBuildable(() => frequencySpectrum(system.spectrum, water), `sea.systems.${s}.spectrum`);
+    requireBuildable(() => directionalSpreading(system.spreading), `sea.systems.${s}.spreading`);
   });
   return {
-    water: waterOfManifest(manifest),
+    water,
     current: currentOfManifest(manifest),
     systems: sea.systems.map(({ name, towardRad, spectrum, spreading, againstShare }: ManifestSystem) => {
       return { name, towardRad, spectrum, spreading, againstShare };
@@ -82,11 +90,23 @@ function wavesOf(request: SeaWavesRequest): readonly CascadeWaves[] {
   return waves;
 }
 
+/** Parameters are a form's key with numbers, or tables of numbers. */
 function requireKnownForm(parameters: object, forms: readonly string[], place: string): void {
   const { form, ...numbers } = parameters as { readonly form: string };
   if (!forms.includes(form)) throw unusable(`${place}.form`, forms.join(' | '), form);
   for (const [key, value] of Object.entries(numbers)) {
-    if (typeof value !== 'number') throw unusable(`${place}.${key}`, 'a number', JSON.stringify(value));
+    const entries: readonly unknown[] = Array.isArray(value) ? value : [value];
+    const strange = entries.findIndex((entry) => typeof entry !== 'number');
+    if (strange >= 0) throw unusable(`${place}.${key}`, 'a number', JSON.stringify(entries[strange]));
+  }
+}
+
+/** Builds a form once: what its parameters lack shows as one error or another, whatever the form. */
+function requireBuildable(build: () => unknown, place: string): void {
+  try {
+    build();
+  } catch (error) {
+    throw unusable(place, 'the parameters of its form', (error as Error).message);
   }
 }
 

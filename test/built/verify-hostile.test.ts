@@ -81,6 +81,16 @@ describe('a manifest that contradicts itself is refused', () => {
       'a parameter that is a text',
       ({ sea }) => Object.assign(sea.systems[0].spectrum, { energyFactor: '1' }),
     ],
+    [
+      'a table without entries',
+      ({ sea }) => {
+        sea.systems[0].spectrum = { form: 'tabulated', energyFactor: 1 } as never;
+      },
+    ],
+    [
+      'a table with a text in it',
+      ({ sea }) => Object.assign(sea.systems[0].spectrum, { form: 'tabulated', frequencyHz: [0.1, '0.2'] }),
+    ],
     ['no peak', ({ sea }) => Object.assign(sea.systems[0].spectrum, { omegaPeakRadPerS: 0 })],
   ])('%s', async (_, change) => {
     await expect(verifyBake(changedBake(change))).rejects.toThrow(InputError);
@@ -121,6 +131,14 @@ describe('a manifest that lies about its files fails', () => {
       } as never;
     });
     expect(await failuresOf(folder)).toEqual(['files']);
+  });
+
+  it('another spectrum, as a table', async () => {
+    const folder = changedBake(({ sea }) => {
+      const table = { frequencyHz: [0.25, 0.3, 0.35], densityM2PerHz: [0, 0.1, 0] };
+      sea.systems[0].spectrum = { form: 'tabulated', energyFactor: 1, ...table };
+    });
+    expect(await failuresOf(folder)).toEqual(expect.arrayContaining(['waves', 'spectrum', 'spot']));
   });
 
   it('a sea without bounds', async () => {
