@@ -26,7 +26,7 @@ function systemFields(system: PlannedSystem, { heightVarianceShare }: SystemRepo
     ...wind,
     ['spectrum', formWords(system.spectrum)],
     ['spreading', formWords(system.spreading)],
-    ['against', `${percent(system.againstShare)} of the waves that would move against that direction stay`],
+    ['against it', `${percent(system.againstShare)} of the waves kept`],
   ];
 }
 
@@ -45,6 +45,8 @@ const UNITS_OF_SUFFIXES: Readonly<Record<string, string>> = {
   Rad: ' rad',
   Mps2: ' m/s2',
   Mps: ' m/s',
+  M2PerHz: ' m2/Hz',
+  Hz: ' Hz',
   M: ' m',
   S: ' s',
 };
@@ -56,14 +58,23 @@ const UNITS_OF_SUFFIXES: Readonly<Record<string, string>> = {
 export function formWords(parameters: { readonly form: string }): string {
   const { form, ...numbers } = parameters;
   const parts = Object.entries(numbers).map(([name, value]) => {
-    const [, stem, suffix = ''] = /^(.+?)(RadPerS|Rad|Mps2|Mps|M|S)?$/.exec(name) as RegExpExecArray;
+    const [, stem, suffix = ''] = /^(.+?)(RadPerS|Rad|Mps2|Mps|M2PerHz|Hz|M|S)?$/.exec(
+      name,
+    ) as RegExpExecArray;
     const label = stem
       .replace(/(\d+)p(\d+)$/, ' at $1.$2 m')
       .replace(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
-    const text = typeof value === 'number' ? rounded(value, 5) : String(value);
+    const text = parameterText(value);
     return `${label} ${text}${UNITS_OF_SUFFIXES[suffix] ?? ''}`;
   });
   return [form, ...parts].join(', ');
+}
+
+function parameterText(value: unknown): string {
+  if (typeof value === 'number') return rounded(value, 5);
+  if (!Array.isArray(value)) return String(value);
+  const numbers = value as number[];
+  return `${numbers.length} values of ${rounded(Math.min(...numbers), 4)} to ${rounded(Math.max(...numbers), 4)}`;
 }
 
 /** The sum of the systems, and what of its height the cascades hold. */

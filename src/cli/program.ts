@@ -23,13 +23,13 @@ const COMMANDS: readonly CommandEntry[] = [
   },
   {
     name: 'plan',
-    summary: 'Tell what a bake would make, cost and lose.',
+    summary: 'Show what a bake would make, cost and lose.',
     usage: '[options] <sea>',
     load: async () => (await import('./plan-command.ts')).definePlanCommand,
   },
   {
     name: 'verify',
-    summary: 'Prove a finished bake from its files alone.',
+    summary: 'Check a finished bake from its files alone.',
     usage: '[options] <bake>',
     load: async () => (await import('./verify-command.ts')).defineVerifyCommand,
   },
@@ -41,7 +41,7 @@ const COMMANDS: readonly CommandEntry[] = [
   },
   {
     name: 'presets',
-    summary: 'List the seas that come along, or print one to start from.',
+    summary: 'List the included seas, or print one to start from.',
     usage: '[name]',
     load: async () => (await import('./presets-command.ts')).definePresetsCommand,
   },

@@ -20,7 +20,10 @@ export function seaDefaultsHelp(): string {
   const fields: [string, string][] = [
     ['seed', String(SEED_DEFAULT)],
     ['water', settings({ ...SEA_WATER_DEFAULTS, depthM: 'deep' })],
-    ['spreading', settings(SPREADING_DEFAULTS)],
+    [
+      'spreading',
+      `wind seas hasselmann, swell cos-2s with s ${SPREADING_DEFAULTS.swellS}; swellNarrowing ${SPREADING_DEFAULTS.swellNarrowing}`,
+    ],
     ['shaping', settings({ ...SHAPING_DEFAULTS, bandGains: 'none' })],
     [
       'loop',
@@ -34,9 +37,9 @@ export function seaDefaultsHelp(): string {
   return ['What a sea file may leave out:', ...indented(fieldLines(fields))].join('\n');
 }
 
-/** `depthM deep, gravityMps2 9.80665, ...`: the library's names, whose suffixes are the units. */
+/** `depth deep, gravity 9.80665, ...`: the library's names without their units are the keys of the file. */
 function settings(defaults: object): string {
   return Object.entries(defaults)
-    .map(([name, value]) => `${name} ${value}`)
+    .map(([name, value]) => `${name.replace(/(Mps2|Kgpm3|Npm|M)$/, '')} ${value}`)
     .join(', ');
 }

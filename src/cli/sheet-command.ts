@@ -5,7 +5,7 @@ import { type ProgramIo, writeResult } from './io.ts';
 
 interface SheetCommandOptions {
   readonly output?: string;
-  readonly frames: number;
+  readonly pictures: number;
   readonly cell: number;
 }
 
@@ -15,9 +15,9 @@ export function defineSheetCommand(command: Command, io: ProgramIo): void {
     .argument('<bake>', 'folder of a finished bake')
     .option('-o, --output <file>', 'where the PNG goes (default: sheet.png in the folder)')
     .addOption(
-      new Option('--frames <n>', 'pictures of each map, spread over the loop')
+      new Option('--pictures <n>', 'pictures of each map, spread over the loop')
         .argParser((text) => wholeNumber(text, 1, 64))
-        .default(CONTACT_SHEET_DEFAULTS.frames),
+        .default(CONTACT_SHEET_DEFAULTS.pictures),
     )
     .addOption(
       new Option('--cell <pixels>', 'side of one picture')
@@ -26,10 +26,10 @@ export function defineSheetCommand(command: Command, io: ProgramIo): void {
     )
     .addHelpText(
       'after',
-      '\nA row for each cascade; in it the maps in the order of the manifest. Lengths, speeds and slopes are grey\naround zero, normals as they are stored, foam and J grey.',
+      '\nA row for each cascade; in it the maps in the order of the manifest. Lengths, speeds and slopes are\ngrey around zero, normals as they are stored, foam and J grey.',
     )
-    .action(async (folder: string, { output, frames, cell }: SheetCommandOptions) => {
-      const sheet = await contactSheet(folder, { frames, cell });
+    .action(async (folder: string, { output, pictures, cell }: SheetCommandOptions) => {
+      const sheet = await contactSheet(folder, { pictures, cell });
       const path = output ?? join(folder, 'sheet.png');
       writeFileAtomic(dirname(path), basename(path), sheet);
       await writeResult(io.stdout, `${path}\n`);

@@ -1,8 +1,8 @@
 /*
- * Contributor notes. Constants and the search come from a numerical study of tilings (figures in DEVELOPERS.md,
- * "Decisions"; its plans in test/published/cascade-plans.test.ts): half of Nyquist leaves 4 texels on the shortest wave,
- * below which bilinear sampling loses slope fast; five waves across a tile at its long end is where tiling stops being
- * seen from above; a fade of 1.25 each way spans two cells of the finer tile at that point.
+ * Contributor notes. Half of Nyquist leaves 4 texels on the shortest wave, below which bilinear sampling loses slope
+ * fast; five waves across a tile at its long end is where tiling stops being seen from above; a fade of 1.25 each way
+ * spans two cells of the finer tile at that point. What was compared stands in DEVELOPERS.md, "Decisions"; plans are
+ * held against those of an independent program in test/published/cascade-plans.test.ts.
  */
 import type { AutoCascades, ListedCascade, ListedCascades, Loop, Sea } from '../sea/sea.ts';
 import type { Band, BandBorder } from '../waves/band.ts';

@@ -12,12 +12,12 @@ export interface ContactSheetOptions {
   /** Side of one picture, pixels. */
   readonly cell?: number;
   /** How many frames to show of each map, spread over the loop. */
-  readonly frames?: number;
+  readonly pictures?: number;
 }
 
 export const CONTACT_SHEET_DEFAULTS: Readonly<Required<ContactSheetOptions>> = Object.freeze({
   cell: 192,
-  frames: 3,
+  pictures: 3,
 });
 
 const GAP = 8;
@@ -25,15 +25,15 @@ const BACKGROUND = { r: 24, g: 27, b: 31 };
 
 /**
  * A picture of a bake for people: a row for each cascade, for each of its maps a few frames side by side. Lengths,
- * speeds, slopes and strains are grey around zero with one scale for all frames of a channel; their last channel (up,
- * where there is one) is shown. Normals are shown as stored, foam and J as grey.
+ * speeds, slopes and strains are grey around zero with one scale for all frames of a channel; the up channel is
+ * shown where there is one, else the first. Normals are shown as stored, foam and J as grey.
  *
  * @param folder folder of a finished bake
  * @returns bytes of a PNG
  * @throws InputError where the folder's manifest or a file is not sound; ReadWriteError where one cannot be read
  */
 export async function contactSheet(folder: string, options: ContactSheetOptions = {}): Promise<Uint8Array> {
-  const { cell, frames } = { ...CONTACT_SHEET_DEFAULTS, ...options };
+  const { cell, pictures: count } = { ...CONTACT_SHEET_DEFAULTS, ...options };
   const manifest = soundManifest(folder);
   const pictures: { input: Buffer; left: number; top: number }[] = [];
   let width = 0;
@@ -41,7 +41,7 @@ export async function contactSheet(folder: string, options: ContactSheetOptions 
     let left = GAP;
     const top = GAP + row * (cell + GAP);
     for (const map of Object.values(cascade.maps)) {
-      for (const path of sampledPaths(cascade, map, frames)) {
+      for (const path of sampledPaths(cascade, map, count)) {
         const image = codecFor(map.format).decode(fileBytes(folder, path), path);
         const pixels = visiblePixels(image, map);
         const input = await sharp(pixels, { raw: { width: image.width, height: image.height, channels: 3 } })
@@ -61,9 +61,9 @@ export async function contactSheet(folder: string, options: ContactSheetOptions 
 }
 
 /** Paths of a map's frames spread evenly over its loop. */
-function sampledPaths(cascade: ManifestCascade, map: ManifestMap, frames: number): readonly string[] {
+function sampledPaths(cascade: ManifestCascade, map: ManifestMap, wanted: number): readonly string[] {
   const { firstFrame, frameCount } = cascade.loop;
-  const count = Math.min(frames, frameCount);
+  const count = Math.min(wanted, frameCount);
   return Array.from({ length: count }, (_, i) => {
     return framePath(map.pattern, firstFrame + Math.floor((i * frameCount) / count));
   });

@@ -92,7 +92,7 @@ export function elfouhailyWavenumberSpectrum(
  *     D(theta) = [1 + Delta cos 2 theta] / 2 pi
  *     Delta = tanh[ln 2 / 4 + 4 (c / c_p)^2.5 + .13 (u* / c_m)(c_m / c)^2.5]
  *
- * Source: Elfouhaily et al. 1997, as found in public codes. Check: computed Delta, test/published/elfouhaily.test.ts.
+ * Source: Elfouhaily et al. 1997, coefficients as in open-source implementations. Check: computed Delta, test/published/elfouhaily.test.ts.
  */
 export function elfouhailySpreading(parameters: ElfouhailySpreadingParameters): DirectionalSpreading {
   const { gravityMps2, frictionVelocityMps } = parameters;
@@ -115,7 +115,7 @@ export function elfouhailySpreading(parameters: ElfouhailySpreadingParameters): 
  *
  *     Omega = .84 tanh[(x / 2.2e4)^.4]^-.75,  x = g X / U10^2
  *
- * Source: Elfouhaily et al. 1997, as found in public codes.
+ * Source: Elfouhaily et al. 1997, coefficients as in open-source implementations.
  *
  * @param fetchM X, m, > 0; `Infinity` is fully developed
  */

@@ -3,7 +3,7 @@
  *
  *     gamma = exp(5.75 - 1.15 T_p / sqrt Hs), 5 where T_p / sqrt Hs <= 3.6, 1 from 5 on
  *
- * Source: DNV-RP-C205, IEC TS 62600-2, as found in public codes. It jumps by .003 at 3.6. Check:
+ * Source: DNV-RP-C205, IEC TS 62600-2, coefficients as in open-source implementations. It jumps by .003 at 3.6. Check:
  * test/published/peak-enhancement.test.ts.
  *
  * @param significantHeightM Hs, m, > 0

@@ -62,7 +62,7 @@ export interface TmaLevel {
  *
  *     kappa = 2 pi U10^2 / (g L_p);  alpha = .0078 kappa^.49;  gamma = 2.47 kappa^.39
  *
- * Source: Bouws et al. 1985, as found in public codes. Check: test/published/depth-factor.test.ts.
+ * Source: Bouws et al. 1985, coefficients as in open-source implementations. Check: test/published/depth-factor.test.ts.
  *
  * @param windSpeedMps U10, m/s, > 0
  * @param peakWavelengthM L_p, wavelength of the peak in this depth, m, > 0

@@ -182,7 +182,7 @@ describe('JONSWAP, Hasselmann et al. 1973', () => {
     expectRelative(jonswap(3, 10, 3.3).density(omega), S, 4e-7, 'S');
   });
 
-  // docs.rs, README of the crate `jonswap`: Hs 2.5, Tp 7, gamma 1.932, cut at a period of .5 s. Status: verified; its
+  // README of an open-source JONSWAP library: Hs 2.5, Tp 7, gamma 1.932, cut at a period of .5 s. Status: verified; its
   // m0 follows from its own fit of the normalisation and its own rectangle rule, hence .2 %.
   it('moments as printed', () => {
     const spectrum = jonswap(2.5, 7, 1.932);

@@ -18,7 +18,7 @@ describe('peak enhancement by steepness', () => {
     expectPrinted(steepnessEnhancement(4, 2 * ratio), printed, 'gamma');
   });
 
-  // docs.rs, README of the crate `jonswap`: Hs 2.5, Tp 7 gives gamma 1.932. Status: verified.
+  // README of an open-source JONSWAP library: Hs 2.5, Tp 7 gives gamma 1.932. Status: verified.
   it('as printed', () => {
     expectPrinted(steepnessEnhancement(2.5, 7), '1.932', 'gamma');
   });

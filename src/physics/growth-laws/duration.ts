@@ -3,7 +3,7 @@
  *
  *     t = 77.23 X^.67 / (U10^.34 g^.33)
  *
- * Source: Coastal Engineering Manual, Part II ch. 2, as found in public codes. (The form of the same law in terms of the
+ * Source: Coastal Engineering Manual, Part II ch. 2, coefficients as in open-source implementations. (The form of the same law in terms of the
  * friction velocity gives some 25 % longer times.) Check: test/published/growth-laws.test.ts.
  *
  * @param windSpeedMps U10, m/s, > 0

@@ -7,7 +7,7 @@ import { developedAtMost, dimensionlessFetch, type GrowthConditions, type WaveGr
  *
  * 11 to 25 % lower than the height of the JONSWAP spectrum with the alpha and gamma of the same experiment
  * (`jonswapGrowth`); ends at full development.
- * Source: Hasselmann et al. 1973, as found in public codes. Check: test/published/growth-laws.test.ts.
+ * Source: Hasselmann et al. 1973, coefficients as in open-source implementations. Check: test/published/growth-laws.test.ts.
  */
 export function jonswap1973(conditions: GrowthConditions): WaveGrowth {
   const x = dimensionlessFetch(conditions);

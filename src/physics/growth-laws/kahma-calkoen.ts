@@ -5,7 +5,7 @@ import { developedAtMost, dimensionlessFetch, type GrowthConditions, type WaveGr
  *
  *     m0 g^2 / U10^4 = 5.2e-7 x^.9;  omega_p U10 / g = 13.7 x^-.27;  x = g X / U10^2
  *
- * Source: Kahma & Calkoen 1992, composite, as found in public codes. Check: test/published/growth-laws.test.ts.
+ * Source: Kahma & Calkoen 1992, composite, coefficients as in open-source implementations. Check: test/published/growth-laws.test.ts.
  */
 export function kahmaCalkoen(conditions: GrowthConditions): WaveGrowth {
   const x = dimensionlessFetch(conditions);

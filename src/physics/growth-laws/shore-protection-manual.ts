@@ -6,7 +6,7 @@ import type { GrowthConditions, WaveGrowth } from './law.ts';
  *     U_A = .71 U10^1.23;  x = g X / U_A^2
  *     g Hs / U_A^2 = 1.6e-3 x^(1/2), at most .2433;  g T_p / U_A = .2857 x^(1/3), at most 8.134
  *
- * Source: Shore Protection Manual 1984, as found in public codes. Check: test/published/growth-laws.test.ts.
+ * Source: Shore Protection Manual 1984, coefficients as in open-source implementations. Check: test/published/growth-laws.test.ts.
  */
 export function shoreProtectionManual({
   windSpeedMps,
@@ -27,7 +27,7 @@ export function shoreProtectionManual({
  *
  *     g t / U_A = 68.8 x^(2/3), at most 71500
  *
- * Source: Shore Protection Manual 1984, as found in public codes. Check: test/published/growth-laws.test.ts.
+ * Source: Shore Protection Manual 1984, coefficients as in open-source implementations. Check: test/published/growth-laws.test.ts.
  *
  * @param durationS s, > 0; `Infinity` from full development on
  */

@@ -9,7 +9,7 @@ const PEAK_OVER_SIGNIFICANT = 1 / 0.95;
  *     g Hs / U^2 = .3 {1 - [1 + .004 x^(1/2)]^-2};  g T_s / (2 pi U) = 1.37 {1 - [1 + .008 x^(1/3)]^-5}
  *
  * T_s is the significant period; the peak period is taken as T_s / .95.
- * Source: Wilson 1965, as found in public codes. Check: test/published/growth-laws.test.ts.
+ * Source: Wilson 1965, coefficients as in open-source implementations. Check: test/published/growth-laws.test.ts.
  */
 export function wilson(conditions: GrowthConditions): WaveGrowth {
   const { windSpeedMps: U, gravityMps2: g } = conditions;

@@ -14,7 +14,7 @@ import {
  *     f_p U10 / g = .133 {tanh A2 tanh[B2 / tanh A2]}^-.37,        A2 = .331 d^1.01,  B2 = 5.215e-4 x^.73
  *     d = g h / U10^2,  x = g X / U10^2
  *
- * Source: Young & Verhagen 1996, as found in public codes. Check: test/published/growth-laws.test.ts.
+ * Source: Young & Verhagen 1996, coefficients as in open-source implementations. Check: test/published/growth-laws.test.ts.
  */
 export function youngVerhagen(conditions: GrowthConditions): WaveGrowth {
   const { windSpeedMps: U10, depthM, gravityMps2: g } = conditions;

@@ -77,6 +77,6 @@ describe('plan', () => {
     const { stdout } = await outcomeOf(['plan', '--help']);
     expect(stdout).toContain(`${LOOP_DEFAULTS.seconds} s at ${LOOP_DEFAULTS.frameRate[0]} frames a second`);
     expect(stdout).toContain(`${CASCADES_DEFAULTS.count} of ${CASCADES_DEFAULTS.resolution} texels`);
-    expect(stdout).toContain(`gravityMps2 ${SEA_WATER_DEFAULTS.gravityMps2}`);
+    expect(stdout).toContain(`gravity ${SEA_WATER_DEFAULTS.gravityMps2}`);
   });
 });

@@ -99,7 +99,7 @@ describe.each(PLANS)('the report on %s', (_name, plan) => {
         for (const value of values)
           expect(printed.some((n) => Math.abs(n - value) <= 1e-4 * value)).toBe(true);
       }
-      expectPercent(numberAfter(own, 'against '), system.againstShare);
+      expectPercent(numberAfter(own, 'against it '), system.againstShare);
       const { effectiveWaves } = plan.report.systems[s];
       expect(numberAfter(own, 'carried by ')).toBe(Math.round(effectiveWaves));
     }

@@ -15,7 +15,7 @@ describe('sheet', () => {
       await outcomeOf(['bake', sea, '-o', folder, '--threads', '0', '-q'], capturedIo());
       const path = join(root, 'sheet.png');
       const { status, stdout } = await outcomeOf(
-        ['sheet', folder, '-o', path, '--frames', '2', '--cell', '48'],
+        ['sheet', folder, '-o', path, '--pictures', '2', '--cell', '48'],
         capturedIo(),
       );
       expect(status).toBe(EXIT_STATUS.done);
