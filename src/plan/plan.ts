@@ -38,7 +38,7 @@ export interface Plan {
 
 /** A wave system and how its numbers were reached. */
 export interface PlannedSystem extends WaveSystem {
-  readonly kind: 'wind-sea' | 'swell';
+  readonly kind: 'wind-sea' | 'swell' | 'measured';
   /** Direction the waves come from, rad clockwise from north. */
   readonly fromRad: number;
   /** Wind at 10 m, m/s, where the system has one. */

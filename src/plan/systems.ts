@@ -4,13 +4,14 @@ import type { SpectrumParameters } from '../spectrum/registry.ts';
 import { withSignificantHeight } from '../spectrum/stated-height.ts';
 import type { WaveSystem } from '../waves/wave-system.ts';
 import { grownSpectrum } from './grown-spectrum.ts';
+import { measuredSpectrum, measuredSpreading } from './measured-spectrum.ts';
 import { statedSpectrum } from './stated-spectrum.ts';
 import { resolvedSpreading } from './system-spreading.ts';
 import { inShort } from './system-words.ts';
 
 /** A wave system with all its numbers, and how they were reached. */
 export interface ResolvedSystem extends WaveSystem {
-  readonly kind: 'wind-sea' | 'swell';
+  readonly kind: 'wind-sea' | 'swell' | 'measured';
   readonly fromRad: number;
   readonly windSpeedMps: number | null;
   readonly basis: string;
@@ -26,7 +27,7 @@ export interface ResolvedSpectrum {
 export function resolvedSystems(sea: Sea): readonly ResolvedSystem[] {
   return sea.systems.map((request) => {
     const { spectrum, basis } = scaledSpectrum(request, sea.water);
-    const windSpeedMps = request.kind === 'wind-sea' ? request.windSpeedMps : null;
+    const windSpeedMps = request.kind === 'swell' ? null : request.windSpeedMps;
     return {
       name: request.name,
       kind: request.kind,
@@ -34,7 +35,10 @@ export function resolvedSystems(sea: Sea): readonly ResolvedSystem[] {
       towardRad: travelDirection(request.fromRad),
       windSpeedMps,
       spectrum,
-      spreading: resolvedSpreading(request.spreading, spectrum, windSpeedMps, sea.water),
+      spreading:
+        request.kind === 'measured'
+          ? measuredSpreading(request)
+          : resolvedSpreading(request.spreading, spectrum, windSpeedMps, sea.water),
       againstShare: request.kind === 'wind-sea' ? sea.shaping.againstWind : 1,
       basis,
     };
@@ -61,6 +65,7 @@ function scaledSpectrum(request: WaveSystemRequest, water: Water): ResolvedSpect
 }
 
 function resolvedSpectrum(request: WaveSystemRequest, water: Water): ResolvedSpectrum {
+  if (request.kind === 'measured') return measuredSpectrum(request, water);
   if (request.stated !== null) return statedSpectrum(request, request.stated, water);
   if (request.kind !== 'wind-sea' || request.growth === null)
     throw new RangeError(`${request.name} has neither a wind nor a height`);

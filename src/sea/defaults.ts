@@ -11,10 +11,15 @@ export const CURRENT_DEFAULTS: Current = Object.freeze({ eastMps: 0, northMps: 0
 
 /**
  * A swell keeps cos-2s with s = 25, the usual value for a swell of short travel.
- * Source: Goda & Suzuki 1975 (10 for a wind sea, 25 and 75 for swells of short and long travel).
+ * Source: Goda & Suzuki 1975 (10 for a wind sea, 25 and 75 for swells of short and long travel). A measured spectrum
+ * without a spread takes 30 degrees, what buoys find at the peak of a mixed sea: common practice, no source.
  */
-export const SPREADING_DEFAULTS: Readonly<{ windSeaS: number; swellS: number; swellNarrowing: number }> =
-  Object.freeze({ windSeaS: 10, swellS: 25, swellNarrowing: 0 });
+export const SPREADING_DEFAULTS: Readonly<{
+  windSeaS: number;
+  swellS: number;
+  swellNarrowing: number;
+  measuredRad: number;
+}> = Object.freeze({ windSeaS: 10, swellS: 25, swellNarrowing: 0, measuredRad: Math.PI / 6 });
 
 export const SHAPING_DEFAULTS: Shaping = Object.freeze({
   bandGains: Object.freeze([]),

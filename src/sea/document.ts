@@ -57,7 +57,27 @@ export interface SwellDocument extends SystemCommonDocument {
   readonly peakPeriod: number;
 }
 
-export type SystemDocument = WindSeaDocument | SwellDocument;
+/** A measured sea: a table, or the files of a buoy and a time. */
+export interface MeasuredDocument extends WindDocument {
+  readonly kind: 'measured';
+  readonly name?: string | undefined;
+  readonly file?: string | undefined;
+  readonly ndbc?: NdbcDocument | undefined;
+  readonly time?: string | undefined;
+  readonly from?: number | undefined;
+  readonly spread?: number | undefined;
+  readonly scaleTo?: number | undefined;
+}
+
+export interface NdbcDocument {
+  readonly density: string;
+  readonly direction1?: string | undefined;
+  readonly direction2?: string | undefined;
+  readonly r1?: string | undefined;
+  readonly r2?: string | undefined;
+}
+
+export type SystemDocument = WindSeaDocument | SwellDocument | MeasuredDocument;
 
 export interface SpectrumDocument {
   readonly form: SpectrumName;

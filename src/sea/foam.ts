@@ -51,7 +51,7 @@ export function resolvedFoam(
 /** The strongest wind of the sea, m/s; null where none is stated. */
 export function strongestWindMps(systems: readonly WaveSystemRequest[]): number | null {
   const winds = systems.flatMap((system) =>
-    system.kind === 'wind-sea' && system.windSpeedMps !== null ? [system.windSpeedMps] : [],
+    system.kind !== 'swell' && system.windSpeedMps !== null ? [system.windSpeedMps] : [],
   );
   return winds.length === 0 ? null : Math.max(...winds);
 }

@@ -1,6 +1,7 @@
 import { readdirSync, readFileSync, statSync } from 'node:fs';
-import { basename, extname } from 'node:path';
+import { basename, dirname, extname, resolve } from 'node:path';
 import { InputError, ReadWriteError } from '../errors.ts';
+import type { FileReader } from './data-file.ts';
 import { shortened } from './findings.ts';
 import { nearestOrPrefix } from './nearest.ts';
 import { parseSea } from './parse.ts';
@@ -13,6 +14,9 @@ const PRESETS = new URL('../../presets/', import.meta.url);
 
 const EXTENSION = '.yaml';
 
+/** Largest data file read, bytes: a buoy's year of one spectral file takes some four million. */
+const LARGEST_DATA_FILE_BYTES = 1 << 25;
+
 /** The text of a sea file or preset with its names. */
 export interface SeaText {
   /** The file's name without folder and extension, or the preset's name: names the bake's folder. */
@@ -20,6 +24,8 @@ export interface SeaText {
   /** For messages. */
   readonly source: string;
   readonly text: string;
+  /** Reads the files it refers to, from its own folder: hand it on to `parseSea`. */
+  readonly readFile: FileReader;
 }
 
 export interface PresetSummary {
@@ -63,10 +69,17 @@ export function presetSummaries(): PresetSummary[] {
  */
 export function seaText(pathOrPreset: string): SeaText {
   if (presetNames().includes(pathOrPreset)) {
-    return { name: pathOrPreset, source: `preset ${pathOrPreset}`, text: presetText(pathOrPreset) };
+    const text = presetText(pathOrPreset);
+    return {
+      name: pathOrPreset,
+      source: `preset ${pathOrPreset}`,
+      text,
+      readFile: dataFiles((path) => new URL(path, PRESETS)),
+    };
   }
   const name = basename(pathOrPreset, extname(pathOrPreset));
-  return { name, source: pathOrPreset, text: fileText(pathOrPreset) };
+  const readFile = dataFiles((path) => resolve(dirname(pathOrPreset), path));
+  return { name, source: pathOrPreset, text: fileText(pathOrPreset), readFile };
 }
 
 /**
@@ -75,8 +88,8 @@ export function seaText(pathOrPreset: string): SeaText {
  * @throws InputError with all its problems; ReadWriteError if the file cannot be read
  */
 export function loadSea(pathOrPreset: string): Sea {
-  const { text, source } = seaText(pathOrPreset);
-  return parseSea(text, { source });
+  const { text, source, readFile } = seaText(pathOrPreset);
+  return parseSea(text, { source, readFile });
 }
 
 function fileText(path: string): string {
@@ -118,6 +131,25 @@ function fileText(path: string): string {
       { cause: error },
     );
   }
+}
+
+/** Reads data files by their written paths, which are places beside a sea file. */
+function dataFiles(placeOf: (path: string) => string | URL): FileReader {
+  return (path) => {
+    try {
+      const place = placeOf(path);
+      const status = statSync(place);
+      if (!status.isFile()) return { problem: 'no regular file' };
+      if (status.size > LARGEST_DATA_FILE_BYTES) return { problem: `${status.size} bytes, more than 32 MiB` };
+      const text = new TextDecoder('utf-8', { fatal: true }).decode(readFileSync(place));
+      return { source: path, text };
+    } catch (error) {
+      const { code } = error as NodeJS.ErrnoException;
+      if (code === 'ENOENT' || code === 'ENOTDIR') return { problem: 'none there' };
+      if (code === 'ERR_ENCODING_INVALID_ENCODED_DATA') return { problem: 'bytes that are no text in UTF-8' };
+      return { problem: `one that cannot be read (${code})` };
+    }
+  };
 }
 
 function tooLarge(path: string, bytes: number): InputError {

@@ -1,7 +1,9 @@
 import type { z } from 'zod';
 import { InputError, type InputProblem } from '../errors.ts';
+import type { FileReader } from './data-file.ts';
 import type { SeaDocument, SystemDocument } from './document.ts';
 import { type Finding, type Place, problemOf, valueText } from './findings.ts';
+import type { DataFiles } from './measured.ts';
 import { type CheckedSections, resolvedSea } from './resolve.ts';
 import { SEA_SCHEMA, SECTION_SCHEMAS } from './schema.ts';
 import { schemaFindings } from './schema-findings.ts';
@@ -12,6 +14,8 @@ import { yamlDocument } from './yaml-document.ts';
 export interface ParseSeaOptions {
   /** The file's name, for messages. */
   readonly source?: string;
+  /** Finds the files of measured systems by their paths; without it such a system is a problem. */
+  readonly readFile?: FileReader;
 }
 
 const NO_PLACE: Place = Object.freeze({ line: 0, column: 0 });
@@ -21,13 +25,16 @@ const MOST_PROBLEMS = 50;
 /**
  * The sea that a YAML 1.2 or JSON text describes: validated, in SI and radians, every default filled in, deeply frozen.
  *
- * @throws InputError with all problems of the text, each with its line, column and remedy
+ * @throws InputError with all problems of the text, each with its line, column and remedy; of a text without any, the
+ *   first problem inside a file it refers to
  */
 export function parseSea(text: string, options: ParseSeaOptions = {}): Sea {
   const source = options.source ?? '<text>';
   const document = yamlDocument(text);
   if (document.problems.length > 0) throw inputError(source, document.problems);
-  return checkedSea(document.value, source, ({ path, atKey = false }) => document.place(path, atKey));
+  return checkedSea(document.value, source, options, ({ path, atKey = false }) =>
+    document.place(path, atKey),
+  );
 }
 
 /**
@@ -37,12 +44,20 @@ export function parseSea(text: string, options: ParseSeaOptions = {}): Sea {
  * @throws InputError with all problems, each with its path
  */
 export function seaFromObject(document: unknown, options: ParseSeaOptions = {}): Sea {
-  return checkedSea(document, options.source ?? '<sea>', () => NO_PLACE);
+  return checkedSea(document, options.source ?? '<sea>', options, () => NO_PLACE);
 }
 
-function checkedSea(document: unknown, source: string, place: (finding: Finding) => Place): Sea {
+function checkedSea(
+  document: unknown,
+  source: string,
+  { readFile }: ParseSeaOptions,
+  place: (finding: Finding) => Place,
+): Sea {
   const findings: Finding[] = [];
-  const sea = seaOrFindings(document, findings);
+  const files: DataFiles = { read: readFile ?? null, errors: [] };
+  const sea = seaOrFindings(document, files, findings);
+  // Data files are in order once the sea file is: their problems have places of their own.
+  if (findings.length === 0 && files.errors.length > 0) throw files.errors[0];
   if (sea === null || findings.length > 0) {
     throw inputError(
       source,
@@ -52,7 +67,7 @@ function checkedSea(document: unknown, source: string, place: (finding: Finding)
   return deeplyFrozen(sea);
 }
 
-function seaOrFindings(document: unknown, findings: Finding[]): Sea | null {
+function seaOrFindings(document: unknown, files: DataFiles, findings: Finding[]): Sea | null {
   if (typeof document !== 'object' || document === null || Array.isArray(document)) {
     findings.push({
       path: [],
@@ -63,9 +78,9 @@ function seaOrFindings(document: unknown, findings: Finding[]): Sea | null {
     return null;
   }
   const parsed = SEA_SCHEMA.safeParse(document);
-  if (parsed.success) return resolvedSea(parsed.data, findings);
+  if (parsed.success) return resolvedSea(parsed.data, files, findings);
   findings.push(...schemaFindings(parsed.error.issues, document));
-  resolvedSea(soundSections(document as Record<string, unknown>), findings);
+  resolvedSea(soundSections(document as Record<string, unknown>), files, findings);
   return null;
 }
 

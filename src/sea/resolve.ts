@@ -6,6 +6,7 @@ import type { Finding } from './findings.ts';
 import { resolvedFoam } from './foam.ts';
 import { resolvedLoop } from './loop.ts';
 import { resolvedMaps } from './maps.ts';
+import type { DataFiles } from './measured.ts';
 import type { OutputConventions, Sea, WaveSystemRequest } from './sea.ts';
 import { resolvedShaping } from './shaping.ts';
 import { heightFindings } from './wave-heights.ts';
@@ -20,13 +21,15 @@ export type CheckedSections = {
  * The sea that a document asks for, every default filled in. Rules that tie several keys together are checked as far
  * as the sections they need are sound, so that one report holds all problems.
  *
- * @returns null if a section is missing; then, or if `findings` grew, there is no sea.
+ * @param files reads the files of measured systems, and collects what is wrong inside them
+ * @returns null if a section is missing; then, or if `findings` or `files.errors` grew, there is no sea.
  */
-export function resolvedSea(sections: CheckedSections, findings: Finding[]): Sea | null {
+export function resolvedSea(sections: CheckedSections, files: DataFiles, findings: Finding[]): Sea | null {
   const { title } = sections;
   const water = sections.water === null ? null : resolvedWater(sections.water);
   const current = sections.water === null ? null : resolvedCurrent(sections.water, findings);
-  const systems = sections.systems === null ? null : resolvedSystems(sections.systems, water, findings);
+  const systems =
+    sections.systems === null ? null : resolvedSystems(sections.systems, water, files, findings);
   if (systems !== null && water !== null) findings.push(...heightFindings(systems, water));
   const shaping = sections.shaping === null ? null : resolvedShaping(sections.shaping, findings);
   const loop = sections.loop === null ? null : resolvedLoop(sections.loop, findings);

@@ -19,7 +19,7 @@ export interface Sea {
 }
 
 /** What the user asks of one wave system, before any formula is applied. */
-export type WaveSystemRequest = WindSeaRequest | SwellRequest;
+export type WaveSystemRequest = WindSeaRequest | SwellRequest | MeasuredRequest;
 
 interface SystemCommon {
   /** Unique in the sea; keys the system's random numbers, so that adding a system leaves the others' waves alone. */
@@ -63,6 +63,34 @@ export type WindWords =
 export interface SwellRequest extends FormedCommon {
   readonly kind: 'swell';
   readonly stated: StatedHeight;
+}
+
+/** A sea that an instrument has measured; `fromRad` is the mean direction of all its energy. */
+export interface MeasuredRequest extends SystemCommon {
+  readonly kind: 'measured';
+  /** The file, and the moment of the record, in words. */
+  readonly source: string;
+  readonly spectrum: MeasuredSpectrum;
+  /** Wind speed at 10 m where it is known (for whitecaps), and the words it was given in; else null. */
+  readonly windSpeedMps: number | null;
+  readonly wind: WindWords | null;
+}
+
+/** A measured spectrum as plain numbers: the lists have an entry for each frequency. */
+export interface MeasuredSpectrum {
+  /** 4 sqrt(sum of density times bandwidth): the height of the file, m. */
+  readonly significantHeightM: number;
+  /** Mean direction at the highest density: radians clockwise from north, in [0, 2 pi). */
+  readonly peakFromRad: number;
+  /** Hz, ascending. */
+  readonly frequencyHz: readonly number[];
+  /** m^2/Hz. */
+  readonly densityM2PerHz: readonly number[];
+  /** Means of cos, sin theta and cos, sin 2 theta, theta counter-clockwise from the mean direction of travel. */
+  readonly cos1: readonly number[];
+  readonly sin1: readonly number[];
+  readonly cos2: readonly number[];
+  readonly sin2: readonly number[];
 }
 
 export const GROWTH_NAMES = [

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import type { SystemDocument } from './document.ts';
 import { checkMessage, choice, quantity, section, wholeNumber, wordOr } from './field-schema.ts';
+import { MEASURED_FIELDS } from './measured-schema.ts';
 import { GROWTH_NAMES } from './sea.ts';
 import { SPECTRUM_SCHEMA } from './spectrum-schema.ts';
 import { SPREADING_SCHEMA } from './spreading-schema.ts';
@@ -110,16 +111,32 @@ const SWELL_SCHEMA = section(
   'A swell: by significantHeight and peakPeriod.',
 );
 
+const MEASURED_SCHEMA = section(
+  {
+    kind: z
+      .literal('measured')
+      .meta({ description: 'A sea that a buoy or another instrument has measured.' }),
+    ...NAME_FIELD,
+    ...MEASURED_FIELDS,
+    ...WIND_FIELDS,
+    ...SCALE_FIELD,
+  },
+  'A measured sea: by a table, or by the files of a buoy and a time.',
+);
+
 export const SYSTEM_SCHEMA: z.ZodType<SystemDocument> = z.discriminatedUnion(
   'kind',
-  [WIND_SEA_SCHEMA, SWELL_SCHEMA],
+  [WIND_SEA_SCHEMA, SWELL_SCHEMA, MEASURED_SCHEMA],
   {
     error: (issue) =>
       issue.code === 'invalid_union'
-        ? checkMessage('one of wind-sea, swell', 'Say which kind of waves these are, e.g. `kind: wind-sea`.')
+        ? checkMessage(
+            'one of wind-sea, swell, measured',
+            'Say which kind of waves these are, e.g. `kind: wind-sea`.',
+          )
         : checkMessage(
             'a wave system (a group of keys)',
-            'Begin it with `- kind: wind-sea` or `- kind: swell`.',
+            'Begin it with `- kind: wind-sea`, `- kind: swell` or `- kind: measured`.',
           ),
   },
 );

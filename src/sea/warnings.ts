@@ -1,11 +1,12 @@
 import { nyquistWavelengthM } from './cascades.ts';
-import type { Sea, WaveSystemRequest } from './sea.ts';
+import type { ListedCascade, Sea, WaveSystemRequest } from './sea.ts';
 import {
   HEIGHT_PER_DEPTH,
   knownHeightM,
   metres,
   peakWavelengthM,
   STEEP,
+  statedHeight,
   statedHeightM,
 } from './wave-heights.ts';
 
@@ -20,6 +21,7 @@ export function seaWarnings(sea: Sea): readonly string[] {
   return [
     ...sea.systems.flatMap((system) => [...steepnessWarnings(system, sea), ...fetchWarnings(system, sea)]),
     ...sea.systems.flatMap((system) => bothWaysWarnings(system, sea)),
+    ...shortWaveWarnings(sea),
     ...depthWarnings(sea),
     ...cascadeWarnings(sea),
     ...foamWarnings(sea),
@@ -27,9 +29,10 @@ export function seaWarnings(sea: Sea): readonly string[] {
 }
 
 function steepnessWarnings(system: WaveSystemRequest, { water }: Sea): string[] {
-  if (!system.stated) return [];
+  const stated = statedHeight(system);
+  if (stated === null || system.kind === 'measured') return [];
   const Hs = knownHeightM(system) as number;
-  const wavelength = peakWavelengthM(system.stated, water);
+  const wavelength = peakWavelengthM(stated, water);
   if (Hs / wavelength <= STEEP[system.kind]) return [];
   const limit = Math.round(1 / STEEP[system.kind]);
   return [
@@ -53,7 +56,8 @@ function fetchWarnings(system: WaveSystemRequest, { water }: Sea): string[] {
 }
 
 function bothWaysWarnings(system: WaveSystemRequest, { shaping }: Sea): string[] {
-  if (system.spreading.form !== 'elfouhaily' || shaping.againstWind < 1) return [];
+  if (system.kind !== 'wind-sea' || system.spreading.form !== 'elfouhaily' || shaping.againstWind < 1)
+    return [];
   return [
     `${system.name}: the spreading \`elfouhaily\` cannot tell waves that run with the wind from those against it, and ` +
       'sends as many either way: the sea will seem to stand. Take out those against it with ' +
@@ -61,11 +65,39 @@ function bothWaysWarnings(system: WaveSystemRequest, { shaping }: Sea): string[]
   ];
 }
 
+/** Waves this many times shorter than the record's last are wanted for their detail. */
+const MISSING_DETAIL = 2;
+
+/** A buoy ends where its hull is as long as the waves: what a camera sees near by is not in its record. */
+function shortWaveWarnings({ systems, cascades, water }: Sea): string[] {
+  const measured = systems.flatMap((system) => (system.kind === 'measured' ? [system] : []));
+  if (measured.length < systems.length) return [];
+  const lastHz = Math.max(...measured.map(({ spectrum }) => spectrum.frequencyHz.at(-1) as number));
+  const last = peakWavelengthM({ significantHeightM: 0, peakPeriodS: 1 / lastHz }, water);
+  const wanted =
+    cascades.plan === 'auto'
+      ? cascades.shortestWavelengthM
+      : Math.min(...cascades.list.map((own) => shortestOf(own, cascades.headRoom)));
+  if (last <= MISSING_DETAIL * wanted) return [];
+  return [
+    `The record ends at ${Number(lastHz.toPrecision(3))} Hz: of waves shorter than ${metres(last)} there are none, though ` +
+      `the cascades reach ${metres(wanted)}. Add a \`wind-sea\` of the same wind for the short waves, or ask for ` +
+      'longer ones.',
+  ];
+}
+
+function shortestOf(
+  { patchLengthM, resolution, shortestWavelengthM }: ListedCascade,
+  headRoom: number,
+): number {
+  return shortestWavelengthM ?? nyquistWavelengthM(patchLengthM, resolution) / headRoom;
+}
+
 function depthWarnings({ systems, water }: Sea): string[] {
   const total = statedHeightM(systems);
   if (total <= HEIGHT_PER_DEPTH.large * water.depthM) return [];
   return [
-    `The stated waves have a significant height of ${metres(total)}, more than half the depth of ` +
+    `The waves have a significant height of ${metres(total)}, more than half the depth of ` +
       `${metres(water.depthM)}: real waves would be breaking, which linear waves do not show.`,
   ];
 }

@@ -10,7 +10,7 @@ export const STEEPEST: number = 1 / 7;
  * Significant steepness above which we warn. Swell is much flatter, as the steep waves stayed behind in the storm;
  * the youngest wind sea of the JONSWAP growth law (g X / U^2 = 10) has 1/13. Common practice, no source.
  */
-export const STEEP: Readonly<Record<WaveSystemRequest['kind'], number>> = Object.freeze({
+export const STEEP: Readonly<Record<'swell' | 'wind-sea', number>> = Object.freeze({
   swell: 1 / 20,
   'wind-sea': 1 / 10,
 });
@@ -29,18 +29,29 @@ export function peakWavelengthM({ peakPeriodS }: StatedHeight, water: Water): nu
   return (2 * Math.PI) / wavenumber((2 * Math.PI) / peakPeriodS, water);
 }
 
-/** A significant height that is known before any formula is applied, and the key that states it. */
+/** A significant height that is known before any formula is applied, and the key that states it, if one does. */
 interface KnownHeight {
   readonly heightM: number;
-  readonly key: 'scaleTo' | 'seaState' | 'significantHeight';
+  readonly key: readonly ('scaleTo' | 'seaState' | 'significantHeight')[];
 }
 
 function knownHeight(system: WaveSystemRequest | null): KnownHeight | null {
   if (system === null) return null;
-  if (system.scaleToM !== null) return { heightM: system.scaleToM, key: 'scaleTo' };
+  if (system.scaleToM !== null) return { heightM: system.scaleToM, key: ['scaleTo'] };
+  if (system.kind === 'measured') {
+    return { heightM: system.spectrum.significantHeightM, key: [] };
+  }
   if (system.stated === null) return null;
   const isBySeaState = system.kind === 'wind-sea' && system.seaState !== null;
-  return { heightM: system.stated.significantHeightM, key: isBySeaState ? 'seaState' : 'significantHeight' };
+  return {
+    heightM: system.stated.significantHeightM,
+    key: [isBySeaState ? 'seaState' : 'significantHeight'],
+  };
+}
+
+/** Height and period as a system's user states them; null where a wind or a record does. */
+export function statedHeight(system: WaveSystemRequest): StatedHeight | null {
+  return system.kind === 'measured' ? null : system.stated;
 }
 
 /** The significant height that a system is known to have, m; null where a growth law will tell. */
@@ -60,9 +71,10 @@ export function heightFindings(systems: readonly (WaveSystemRequest | null)[], w
   systems.forEach((system, i) => {
     const known = knownHeight(system);
     if (known === null) return;
-    const path = ['systems', i, known.key];
+    const path = ['systems', i, ...known.key];
     const { heightM: Hs } = known;
-    const wavelength = system?.stated ? peakWavelengthM(system.stated, water) : Infinity;
+    const stated = system === null ? null : statedHeight(system);
+    const wavelength = stated === null ? Infinity : peakWavelengthM(stated, water);
     if (Hs / wavelength > STEEPEST) {
       findings.push({
         path,

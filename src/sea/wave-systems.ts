@@ -2,6 +2,7 @@ import type { Water } from '../physics/water.ts';
 import { directionRad } from './direction.ts';
 import type { SwellDocument, SystemDocument } from './document.ts';
 import type { DocumentPath, Finding } from './findings.ts';
+import { type DataFiles, resolvedMeasured } from './measured.ts';
 import type { SwellRequest, WaveSystemRequest } from './sea.ts';
 import { checkSpectrumNumbers, checkSwellSpectrum } from './spectra.ts';
 import { resolvedSpreading } from './spreading.ts';
@@ -14,15 +15,16 @@ import { resolvedWindSea } from './wind-sea.ts';
 export function resolvedSystems(
   documents: readonly (SystemDocument | null)[],
   water: Water | null,
+  files: DataFiles,
   findings: Finding[],
 ): (WaveSystemRequest | null)[] {
   const names = systemNames(documents, findings);
   return documents.map((document, i) => {
     if (document === null) return null;
     const path = ['systems', i];
-    return document.kind === 'wind-sea'
-      ? resolvedWindSea(document, names[i], water, path, findings)
-      : resolvedSwell(document, names[i], path, findings);
+    if (document.kind === 'wind-sea') return resolvedWindSea(document, names[i], water, path, findings);
+    if (document.kind === 'swell') return resolvedSwell(document, names[i], path, findings);
+    return resolvedMeasured(document, names[i], path, files, findings);
   });
 }
 

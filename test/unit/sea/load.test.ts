@@ -1,4 +1,4 @@
-import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, describe, expect, test } from 'vitest';
@@ -20,7 +20,7 @@ function written(name: string, content: string | Uint8Array): string {
 describe('files', () => {
   test('a sea file gives its name to the bake', () => {
     const path = written('my.bay.yaml', TINY_SEA_YAML);
-    expect(seaText(path)).toEqual({ name: 'my.bay', source: path, text: TINY_SEA_YAML });
+    expect(seaText(path)).toMatchObject({ name: 'my.bay', source: path, text: TINY_SEA_YAML });
     expect(loadSea(path)).toEqual(tinySea());
   });
 
@@ -47,6 +47,40 @@ describe('files', () => {
   });
 });
 
+describe('files that a sea file refers to', () => {
+  const TABLE = 'frequency,energy,direction,spread\n0.1,1,250,30\n0.2,2,250,30\n0.3,1,250,30\n';
+  const measured = (keys: string): string =>
+    `seaFile: 1\ntitle: Measured\nsystems:\n  - { kind: measured, ${keys} }\n`;
+
+  test('are found from its folder, wherever the tool runs', () => {
+    mkdirSync(join(folder, 'records'));
+    written('records/table.csv', TABLE);
+    const sea = loadSea(written('measured.yaml', measured('file: records/table.csv')));
+    expect(sea.systems).toMatchObject([{ kind: 'measured', source: 'records/table.csv' }]);
+    expect(loadSea(written('records/measured.yaml', measured('file: table.csv'))).systems).toHaveLength(1);
+    expect(Object.isFrozen(sea.systems[0].kind === 'measured' && sea.systems[0].spectrum.cos1)).toBe(true);
+  });
+
+  test('that cannot be read are told at the line that names them', () => {
+    const path = written('lost.yaml', measured('file: nowhere.csv'));
+    expect(() => loadSea(path)).toThrow(/lost\.yaml:4:29: systems\[0\]\.file: .* found none there/);
+    written('bytes.csv', Uint8Array.of(0xff, 0xfe, 0x00));
+    expect(() => loadSea(written('bytes.yaml', measured('file: bytes.csv')))).toThrow(/no text in UTF-8/);
+    expect(() => loadSea(written('folder.yaml', measured('file: records')))).toThrow(/found no regular file/);
+    written('huge.csv', new Uint8Array((1 << 25) + 1));
+    expect(() => loadSea(written('huge.yaml', measured('file: huge.csv')))).toThrow(/more than 32 MiB/);
+  });
+
+  test('have lines of their own for what is wrong inside them, once the sea file is right', () => {
+    written('cut.csv', TABLE.slice(0, -8));
+    const path = written('cut.yaml', measured('file: cut.csv'));
+    expect(() => loadSea(path)).toThrow(InputError);
+    expect(() => loadSea(path)).toThrow(/^cut\.csv:4:1: expected 4 values/);
+    const both = written('both.yaml', `${measured('file: cut.csv')}loop: { seconds: -1 }\n`);
+    expect(() => loadSea(both)).toThrow(/^\S*both\.yaml:5:18: loop\.seconds/);
+  });
+});
+
 describe('presets', () => {
   test('there are at least eight, demo among them', () => {
     expect(presetNames().length).toBeGreaterThanOrEqual(8);
@@ -68,7 +102,7 @@ describe('presets', () => {
     (name) => {
       const text = presetText(name);
       expect(text.startsWith('# yaml-language-server: $schema=./sea.schema.json\n# ')).toBe(true);
-      expect(parseSea(text)).toEqual(loadSea(name));
+      expect(parseSea(text, { readFile: seaText(name).readFile })).toEqual(loadSea(name));
       expect(seaWarnings(loadSea(name))).toEqual([]);
     },
   );

@@ -1,10 +1,13 @@
 import { describe, expect, test } from 'vitest';
 import { parseSea } from '../../../src/sea/parse.ts';
-import type { WaveSystemRequest } from '../../../src/sea/sea.ts';
+import type { SwellRequest, WindSeaRequest } from '../../../src/sea/sea.ts';
 import { HEAD, problemsOf } from './problems.ts';
 
-function systems(lines: string, above = ''): readonly WaveSystemRequest[] {
-  return parseSea(`${HEAD}${above}systems:\n${lines}`).systems;
+function systems(lines: string, above = ''): readonly (WindSeaRequest | SwellRequest)[] {
+  return parseSea(`${HEAD}${above}systems:\n${lines}`).systems.map((system) => {
+    if (system.kind === 'measured') throw new Error('no file was given');
+    return system;
+  });
 }
 
 describe('what a system may leave out', () => {
