@@ -17,7 +17,7 @@ export function measuredSpectrum(request: MeasuredRequest, water: Water): Resolv
   return {
     spectrum: withSignificantHeight(table, water, significantHeightM),
     basis:
-      `measured, ${request.source}: height ${inShort(significantHeightM)} m, peak ${inShort(1 / peakHz)} s from ` +
+      `from ${request.source}: height ${inShort(significantHeightM)} m, peak ${inShort(1 / peakHz)} s from ` +
       `${inShort((peakFromRad * 180) / Math.PI)} deg, ${last + 1} bands from ${inShort(frequencyHz[0])} to ` +
       `${inShort(frequencyHz[last])} Hz; directions of largest entropy (Kobune & Hashimoto 1986)`,
   };

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { integral } from '../../../src/math/quadrature.ts';
 import { SEA_WATER_DEFAULTS } from '../../../src/physics/water.ts';
-import { directionalSpectrum, energyGain } from '../../../src/waves/directional-spectrum.ts';
+import { directionalSpectrum, energyGain, peakHalfWidth } from '../../../src/waves/directional-spectrum.ts';
 import type { WaveSystem } from '../../../src/waves/wave-system.ts';
 import { jonswapSystem } from '../../support/tiny-waves.ts';
 import { expectRelative } from '../../support/tolerances.ts';
@@ -72,5 +72,36 @@ describe('directionalSpectrum', () => {
     };
     expect([40, 5, 1].map(ratio)).toEqual([1, 0.25, 1]);
     expect(shaped.peakWavenumberRadPerM).toBe(plain.peakWavenumberRadPerM);
+  });
+});
+
+describe('half-width of the peak', () => {
+  const halfWidth = (spreading: WaveSystem['spreading']): number => {
+    const system: WaveSystem = { ...jonswapSystem('sea', 1, 5), spreading };
+    return peakHalfWidth(directionalSpectrum(system, SEA_WATER_DEFAULTS, []));
+  };
+
+  // Half-power half-widths of cos-2s, computed elsewhere; found in steps of a tenth.
+  it.each([
+    [10, 29.9953],
+    [75, 11.0078],
+  ])('s = %d: %f degrees', (s, degrees) => {
+    const found = (halfWidth({ form: 'cos-2s', s, omegaPeakRadPerS: 1, swellNarrowing: 0 }) * 180) / Math.PI;
+    expect(found).toBeGreaterThanOrEqual(degrees);
+    expect(found).toBeLessThan(1.1 * degrees);
+  });
+
+  it('is that of the highest lobe, wherever a measured one lies', () => {
+    const lobe = (about: number): number =>
+      halfWidth({
+        form: 'tabulated',
+        frequencyHz: [0.01, 1],
+        cos1: [0.95, 0.95].map((r) => r * Math.cos(about)),
+        sin1: [0.95, 0.95].map((r) => r * Math.sin(about)),
+        cos2: [0.815, 0.815].map((r) => r * Math.cos(2 * about)),
+        sin2: [0.815, 0.815].map((r) => r * Math.sin(2 * about)),
+      });
+    for (const about of [-3.1, -1, 0.5, 3]) expectRelative(lobe(about), lobe(0), 0.11, `lobe at ${about}`);
+    expect(lobe(0)).toBeLessThan(0.5);
   });
 });
