@@ -30,6 +30,8 @@ export interface Float32Synthesis {
   samples(requests: readonly SamplesRequest[]): readonly (readonly SampleStatistics[])[];
   /** Largest magnitude of values over the tile, of J - 1 for `jacobian`; NaN where one is not a number. */
   largest(values: readonly SampledValue[]): readonly number[];
+  /** One value of the frame over the tile, J - 1 for `jacobian`: a new Float32Array N*N, row 0 in the south. */
+  values(value: SampledValue): Float32Array;
   /** Turns to frame n and copies all its fields. The arrays are the synthesis's own: the next call overwrites them. */
   frame(n: number): Float32Fields;
 }
@@ -80,7 +82,7 @@ export function float32Engine(memoryLimit: number = LARGEST_MEMORY): Float32Engi
         () => ({ plan, waves: turned, height: base + parts.height, rate: base + parts.rate }),
         () => parts.strips.map((offset) => base + offset),
       );
-      const { samples, largest, fillField } = sampler(kernel, store, N);
+      const { samples, largest, fillValues } = sampler(kernel, store, N);
       const requireFrame = () => {
         if (borrower !== self)
           throw new Error('another cascade has used the work memory since this frame was made');
@@ -106,12 +108,18 @@ export function float32Engine(memoryLimit: number = LARGEST_MEMORY): Float32Engi
           requireFrame();
           return largest(values, base + parts.block);
         },
+        values(value) {
+          requireFrame();
+          const out = new Float32Array(N * N);
+          fillValues(out, value, base + parts.block);
+          return out;
+        },
         frame(n) {
           turnTo(n);
           for (const field of options.fields) {
             const plane = planes.get(field) ?? new Float32Array(N * N);
             planes.set(field, plane);
-            fillField(plane, field, base + parts.block);
+            fillValues(plane, field, base + parts.block);
           }
           return Object.fromEntries(planes);
         },

@@ -137,8 +137,9 @@ export function pairStore(
       const pair = FIELD_PAIRS.find(({ first, second }) => field === first || field === second) as FieldPair;
       const address = strips(pair);
       if (field === pair.first) return { address, unscale: 1 };
-      const unscale = field === 'strainEastNorth' ? 1 / sources().waves.shearScale : 1;
-      return { address: address + STRIP_ROW / 2, unscale };
+      if (field !== 'strainEastNorth') return { address: address + STRIP_ROW / 2, unscale: 1 };
+      const { shearScale } = sources().waves;
+      return { address: address + STRIP_ROW / 2, unscale: shearScale === 0 ? 0 : 1 / shearScale };
     },
   };
 }

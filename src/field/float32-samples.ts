@@ -26,8 +26,8 @@ export interface Sampler {
   samples(requests: readonly SamplesRequest[], address: number): SampleStatistics[][];
   /** Largest magnitude of each value over the tile, of J - 1 for the Jacobian; NaN where one is not a number. */
   largest(values: readonly SampledValue[], address: number): number[];
-  /** One field's values: fills Float32Array N*N, row 0 south. */
-  fillField(out: Float32Array, field: FieldName, address: number): void;
+  /** Fills Float32Array N*N with one value, J - 1 for the Jacobian; row 0 south. */
+  fillValues(out: Float32Array, value: SampledValue, address: number): void;
 }
 
 export function sampler(kernel: WaveKernel, pairs: PairStore, N: number): Sampler {
@@ -46,7 +46,11 @@ export function sampler(kernel: WaveKernel, pairs: PairStore, N: number): Sample
     const offset = (column / STRIP_COLUMNS) * stripBytes(N) + fieldRow * STRIP_ROW;
     const size = [step, stripBytes(N), block.rows, block.columns] as const;
     const start = (field: FieldName) => pairs.place(field).address + offset;
-    const slot = (value: SampledValue) => out + values.indexOf(value) * block.channelBytes;
+    // A part of the normal that nobody wants goes behind the others.
+    const slot = (value: SampledValue) => {
+      const c = values.indexOf(value);
+      return out + (c < 0 ? MOST_CHANNELS - 1 : c) * block.channelBytes;
+    };
     const strain = () =>
       [
         start('strainEastEast'),
@@ -54,7 +58,7 @@ export function sampler(kernel: WaveKernel, pairs: PairStore, N: number): Sample
         start('strainEastNorth'),
         pairs.place('strainEastNorth').unscale,
       ] as const;
-    if (values.includes('normalUp')) {
+    if (values.some(isNormal)) {
       const [east, north, up] = [slot('normalEast'), slot('normalNorth'), slot('normalUp')];
       program.normalRows(east, north, up, start('slopeEast'), start('slopeNorth'), ...strain(), ...size);
     }
@@ -137,11 +141,11 @@ export function sampler(kernel: WaveKernel, pairs: PairStore, N: number): Sample
       });
       return largest;
     },
-    fillField(out, field, address) {
+    fillValues(out, value, address) {
       const request = { sample: 'float', channels: 1, N, block, stored: address, packed: address } as const;
       const copyOut = blockCopier(kernel, { planes: [out] }, request);
       forEachBlock((place) => {
-        fillBlock([field], place, 'south', address);
+        fillBlock([value], place, 'south', address);
         copyOut(place);
       });
     },

@@ -38,7 +38,7 @@ export interface MapStorage {
 }
 
 /** Channel units per SI unit. */
-const UNITS_PER_SI: Readonly<Record<Unit, number>> = { m: 1, cm: 100, 'm/s': 1, 'cm/s': 100, '1': 1 };
+export const UNITS_PER_SI: Readonly<Record<Unit, number>> = { m: 1, cm: 100, 'm/s': 1, 'cm/s': 100, '1': 1 };
 
 /**
  * Stores a map's values: rows put in file order, units applied, samples rounded to nearest (floats in the middle to
