@@ -10,7 +10,9 @@ import { expectPrinted, expectRelative } from '../support/tolerances.ts';
 // it is that words, laws and spectra are put together as published.
 
 function asked(keys: string, water = '{ gravity: 9.81 }') {
-  const sea = parseSea(`seaFile: 1\ntitle: Test\nwater: ${water}\nsystems: [{ from: 0, ${keys} }]\nfoam: off`);
+  const sea = parseSea(
+    `seaFile: 1\ntitle: Test\nwater: ${water}\nsystems: [{ from: 0, ${keys} }]\nfoam: off`,
+  );
   const [{ spectrum, windSpeedMps }] = resolvedSystems(sea);
   const S = frequencySpectrum(spectrum, sea.water);
   return { S, spectrum, windSpeedMps, Hs: significantHeight(S), Tp: (2 * Math.PI) / S.omegaPeak };

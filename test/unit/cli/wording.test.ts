@@ -97,6 +97,17 @@ describe('wrapped', () => {
 });
 
 describe('formWords', () => {
+  it('tells lists by their length and range, and every unit there is', () => {
+    const table = { form: 'tabulated', frequencyHz: [0.03, 0.1, 0.2], densityM2PerHz: [0, 4.25, 1] };
+    expect(formWords(table as { form: string })).toBe(
+      'tabulated, frequency 3 values of 0.03 to 0.2 Hz, density 3 values of 0 to 4.25 m2/Hz',
+    );
+    const narrow = { form: 'wrapped-normal', standardDeviationRad: 0.4, gravityMps2: 9.81 };
+    expect(formWords(narrow as { form: string })).toBe(
+      'wrapped-normal, standard deviation 0.4 rad, gravity 9.81 m/s2',
+    );
+  });
+
   it('reads units off the suffixes of whatever parameters a form has', () => {
     const parameters = {
       form: 'new-form',
