@@ -66,18 +66,14 @@ function cascadeContradictions(manifest: Manifest, cascade: ManifestCascade, pla
   if (Math.abs(loop.seconds / seconds - 1) > 1e-12) {
     problems.push(problem(`${place}.loop.seconds`, `${seconds} by its frames and rate`, `${loop.seconds}`));
   }
+  // A frame count that the list of files cannot hold would only waste time; bounded here, it bounds all work below.
+  const most = manifest.files.length;
+  if (loop.frameCount > most) {
+    const expected = `at most ${most}, the number of files`;
+    problems.push(problem(`${place}.loop.frameCount`, expected, `${loop.frameCount}`));
+  }
   for (const [name, map] of Object.entries(cascade.maps)) {
     problems.push(...mapContradictions(manifest, name as MapName, map, `${place}.maps.${name}`));
-    // A frame count that the list of files cannot hold would only waste time; bounded here, it bounds all work below.
-    if (loop.frameCount > manifest.files.length) {
-      problems.push(
-        problem(
-          `${place}.loop.frameCount`,
-          `at most ${manifest.files.length}, the number of files`,
-          `${loop.frameCount}`,
-        ),
-      );
-    }
   }
   return problems;
 }

@@ -9,8 +9,8 @@ export interface WaveMoments {
   /** Slope variance along and across the wind. */
   readonly alongWind: number;
   readonly acrossWind: number;
-  /** Variance by frequency: turns per loop, in steps of one turn; and the loop's length, s. */
-  readonly byTurns: readonly number[];
+  /** Variance by frequency, in turns per loop; and the loop's length, s. */
+  readonly byTurns: ReadonlyMap<number, number>;
   readonly periodS: number;
 }
 
@@ -20,7 +20,7 @@ export function waveMoments(waves: MeasuredWaves, windTowardRad: number): WaveMo
   const N = lattice.resolution;
   const dk = wavenumberStep(lattice);
   const [c, s] = [Math.cos(windTowardRad), Math.sin(windTowardRad)];
-  const byTurns: number[] = [];
+  const byTurns = new Map<number, number>();
   let [m0, m2, alongWind, acrossWind] = [0, 0, 0, 0];
   for (let i = 0; i < variance.length; i++) {
     const E = variance[i];
@@ -33,9 +33,9 @@ export function waveMoments(waves: MeasuredWaves, windTowardRad: number): WaveMo
     m2 += E * omega * omega;
     alongWind += E * (kx * c + ky * s) ** 2;
     acrossWind += E * (ky * c - kx * s) ** 2;
-    byTurns[m] = (byTurns[m] ?? 0) + E;
+    byTurns.set(m, (byTurns.get(m) ?? 0) + E);
   }
-  return { m0, m2, alongWind, acrossWind, byTurns: Array.from(byTurns, (E) => E ?? 0), periodS };
+  return { m0, m2, alongWind, acrossWind, byTurns, periodS };
 }
 
 /**
@@ -50,17 +50,17 @@ export function waveMoments(waves: MeasuredWaves, windTowardRad: number): WaveMo
  */
 export function peakPeriodS(cascades: readonly WaveMoments[]): number | null {
   const longest = Math.max(...cascades.map(({ periodS }) => periodS));
-  const E: number[] = [];
+  const E = new Map<number, number>();
   for (const { byTurns, periodS } of cascades) {
-    byTurns.forEach((variance, m) => {
+    for (const [m, variance] of byTurns) {
       const bin = Math.round((m * longest) / periodS);
-      E[bin] = (E[bin] ?? 0) + variance;
-    });
+      E.set(bin, (E.get(bin) ?? 0) + variance);
+    }
   }
   let [moment, sum] = [0, 0];
-  E.forEach((variance, bin) => {
+  for (const [bin, variance] of E) {
     moment += (bin / longest) * variance ** 4;
     sum += variance ** 4;
-  });
+  }
   return moment > 0 ? sum / moment : null;
 }

@@ -201,8 +201,8 @@ describe('moments of measured waves', () => {
     expect(2 * Math.PI * Math.sqrt(moments.m0 / moments.m2)).toBeCloseTo(2, 12);
     expect(peakPeriodS([moments])).toBeCloseTo(2, 12);
     // A second cascade with a shorter loop, a tenth of the energy at half the period: hardly moves the peak.
-    const finer = { ...moments, byTurns: [0, 0, 0, 0, 0, 0.002], periodS: 5 };
+    const finer = { ...moments, byTurns: new Map([[5, 0.002]]), periodS: 5 };
     expect(peakPeriodS([moments, finer])).toBeCloseTo(2, 3);
-    expect(peakPeriodS([{ ...moments, byTurns: [] }])).toBeNull();
+    expect(peakPeriodS([{ ...moments, byTurns: new Map() }])).toBeNull();
   });
 });
