@@ -13,6 +13,7 @@ export {
   type GatherOptions,
   type Part,
   type RunOptions,
+  SYNC_POLICIES,
   type SyncPolicy,
 } from './bake/options.ts';
 export { expectedMemoryBytes } from './bake/resources.ts';

@@ -28,6 +28,29 @@ export function foamLevels(cascade: PlannedCascade): number {
   return cascade.maps.find(({ map }) => map === 'foam')?.sample === 'uint8' ? 255 : 65535;
 }
 
+/** Buffers that are kept from job to job: a search for the breaking level takes hundreds of them. */
+export interface FoamBuffers {
+  /** Uint16Array of at least this length, its content undefined. */
+  codes(length: number): Uint16Array;
+  /** Float64Array of exactly this length, its content undefined. */
+  state(length: number): Float64Array;
+}
+
+export function foamBuffers(): FoamBuffers {
+  let codes = new Uint16Array(0);
+  let state = new Float64Array(0);
+  return {
+    codes(length) {
+      if (codes.length < length) codes = new Uint16Array(length);
+      return codes;
+    },
+    state(length) {
+      if (state.length < length) state = new Float64Array(length);
+      return state.subarray(0, length);
+    },
+  };
+}
+
 /**
  * Sum of written foam codes over a loop and a grid of texels, for several breaking levels. Integers, so that any split
  * of the rows adds up to the same.
@@ -39,6 +62,7 @@ export function foamSums(
   grid: { readonly fromRow: number; readonly toRow: number; readonly stride: number },
   breakingCodes: readonly number[],
   read: CodeReader,
+  buffers: FoamBuffers,
 ): { readonly texels: number; readonly sums: readonly number[] } {
   const N = cascade.resolution;
   const { frameCount } = cascade.loop;
@@ -49,14 +73,14 @@ export function foamSums(
   const rows = Math.ceil((grid.toRow - grid.fromRow) / grid.stride);
   const texels = perRow * rows;
   // The block's codes of the whole loop, [frame][texel of the grid]: read once, used for every level.
-  const codes = new Uint16Array(frameCount * texels);
+  const codes = buffers.codes(frameCount * texels);
   for (let n = 0, o = 0; n < frameCount; n++) {
     const block = read(n, grid.fromRow, grid.toRow);
     for (let row = 0; row < rows; row++) {
       for (let x = 0; x < N; x += grid.stride) codes[o++] = block[row * grid.stride * N + x];
     }
   }
-  const state = new Float64Array(texels);
+  const state = buffers.state(texels);
   const sums = breakingCodes.map((breakingCode) => {
     const source = sourceTable(foam, breakingCode);
     state.fill(0);

@@ -9,7 +9,7 @@ import { fillFromFiles } from '../store/scratch.ts';
 import type { WaveAmplitudes } from '../waves/wave-amplitudes.ts';
 import { type CascadeMaker, cascadeMaker, encodedFile } from './cascade-maker.ts';
 import { secondsNow } from './clock.ts';
-import { type CodeReader, foamImages, foamSums } from './foam-loop.ts';
+import { type CodeReader, type FoamBuffers, foamBuffers, foamImages, foamSums } from './foam-loop.ts';
 import type {
   FoamJob,
   FoamMeasureJob,
@@ -48,6 +48,13 @@ export function jobRunner(context: JobContext): (job: Job) => Generator<FrameRes
     makers.set(c, made);
     return made;
   };
+  const readers = new Map<number, CodeReader>();
+  const reader = (c: number): CodeReader => {
+    const made = readers.get(c) ?? codeReader(plan.cascades[c], folder);
+    readers.set(c, made);
+    return made;
+  };
+  const buffers = foamBuffers();
   return function* done(job) {
     switch (job.kind) {
       case 'frame':
@@ -56,9 +63,9 @@ export function jobRunner(context: JobContext): (job: Job) => Generator<FrameRes
       case 'survey':
         return surveyResult(job, plan.cascades[job.cascade], maker(job.cascade));
       case 'foam-measure':
-        return foamMeasure(job, plan, folder);
+        return foamMeasure(job, plan, reader(job.cascade), buffers);
       case 'foam':
-        yield* foamResults(job, context);
+        yield* foamResults(job, context, reader(job.cascade));
         return null;
       case 'check':
         return {
@@ -104,22 +111,22 @@ function surveyResult(job: SurveyJob, cascade: PlannedCascade, maker: CascadeMak
   return { kind: 'survey', extents: Object.fromEntries(extents) };
 }
 
-function foamMeasure(job: FoamMeasureJob, plan: Plan, folder: string): JobResult {
+function foamMeasure(job: FoamMeasureJob, plan: Plan, read: CodeReader, buffers: FoamBuffers): JobResult {
   const cascade = plan.cascades[job.cascade];
-  const read = codeReader(cascade, folder);
+  const foam = cascade.foam as CascadeFoam;
   return {
     kind: 'foam-measure',
-    ...foamSums(plan, cascade, cascade.foam as CascadeFoam, job, job.breakingCodes, read),
+    ...foamSums(plan, cascade, foam, job, job.breakingCodes, read, buffers),
   };
 }
 
-function* foamResults(job: FoamJob, context: JobContext): Generator<FrameResult> {
-  const { plan, folder } = context;
+function* foamResults(job: FoamJob, context: JobContext, read: CodeReader): Generator<FrameResult> {
+  const { plan } = context;
   const cascade = plan.cascades[job.cascade];
   const planned = cascade.maps.find(({ map }) => map === 'foam');
   if (planned === undefined) return;
   let timer = stageTimer();
-  const images = foamImages(plan, cascade, cascade.foam as CascadeFoam, job, codeReader(cascade, folder));
+  const images = foamImages(plan, cascade, cascade.foam as CascadeFoam, job, read);
   for (const { frame, image, statistics } of images) {
     timer.lap('foam');
     const { path, bytes } = encodedFile(plan, cascade, planned, image, frame);

@@ -21,7 +21,8 @@ export interface RunOptions {
   readonly onNotice?: ((notice: string) => void) | null;
 }
 
-export type SyncPolicy = 'manifest' | 'every-file';
+export const SYNC_POLICIES = ['manifest', 'every-file'] as const;
+export type SyncPolicy = (typeof SYNC_POLICIES)[number];
 
 export interface BakeOptions extends RunOptions {
   /** Make only these frames: no foam, no manifest; a later bake reuses them. */

@@ -5,9 +5,9 @@ import type { FrameId } from './jobs.ts';
 import { machineMemoryBytes } from './machine.ts';
 import { frameCost } from './shard.ts';
 
-/** A runtime's own memory for the main thread and for each worker, bytes; measured, see DEVELOPERS.md. */
-const MAIN_THREAD_BYTES = 90e6;
-const WORKER_BYTES = 30e6;
+/** A runtime's own memory for the main thread and for each worker, bytes: measured, `test/built` holds it to that. */
+const MAIN_THREAD_BYTES = 108e6;
+const WORKER_BYTES = 36e6;
 
 /** Memory a bake is expected to take at its peak, bytes. */
 export function expectedMemoryBytes({ report: { cost } }: Plan, threads: number): number {

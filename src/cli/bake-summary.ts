@@ -9,7 +9,6 @@ export function bakeSummary(
   { folder, manifest, run }: BakeResult,
   checked: VerifyReport | null,
 ): string {
-  const made = `${counted(run.framesMade, 'frame')} made${run.framesReused === 0 ? '' : `, ${run.framesReused} reused`}`;
   const cascades = plan.cascades
     .map(({ id, resolution }) => `${id} ${resolution} x ${resolution}`)
     .join(', ');
@@ -19,12 +18,24 @@ export function bakeSummary(
     ...(manifest === null ? [] : resultFields(manifest)),
     ...(checked === null ? [] : [['checked', checkedWords(checked)] as const]),
     ['files', `${folder}${manifest === null ? ' (some frames only: no foam, no manifest yet)' : ''}`],
-    [
-      'took',
-      `${duration(run.wallSeconds)} ${threadWords(run.threads)}: ${made}, ${byteSize(run.bytesWritten)} written`,
-    ],
+    ['took', runWords(run)],
   ];
   return `${fieldLines(fields).join('\n')}\n`;
+}
+
+/** What a gather has made of shards. */
+export function gatherSummary({ folder, manifest, run }: BakeResult, checked: VerifyReport | null): string {
+  const fields: Field[] =
+    manifest === null
+      ? [['gathered', 'a part of the foam; gather without --part once all parts are made']]
+      : [['gathered', manifest.title], ...resultFields(manifest)];
+  if (checked !== null) fields.push(['checked', checkedWords(checked)]);
+  return `${fieldLines([...fields, ['files', folder], ['took', runWords(run)]]).join('\n')}\n`;
+}
+
+function runWords(run: BakeResult['run']): string {
+  const made = `${counted(run.framesMade, 'frame')} made${run.framesReused === 0 ? '' : `, ${run.framesReused} reused`}`;
+  return `${duration(run.wallSeconds)} ${threadWords(run.threads)}: ${made}, ${byteSize(run.bytesWritten)} written`;
 }
 
 function resultFields({ statistics, losses, files, cascades }: Manifest): Field[] {

@@ -1,15 +1,17 @@
 import { basename, dirname } from 'node:path';
 import type { Command } from 'commander';
-import { machineThreads, type Plan, planText, writeFileAtomic } from '../index.ts';
+import { type Plan, planText, surveyedBake, writeFileAtomic } from '../index.ts';
 import { coloursOf } from './colours.ts';
 import { type ProgramIo, say, writeResult } from './io.ts';
 import { planReport } from './plan-report.ts';
 import { plannedInput } from './planned-input.ts';
+import { threadsOption, watchedRun } from './run-options.ts';
 import { seaDefaultsHelp } from './sea-defaults.ts';
 
 interface PlanCommandOptions {
   readonly json?: boolean;
   readonly save?: string;
+  readonly threads: number;
 }
 
 /** `plan`: all decisions of a bake, before a frame is made. */
@@ -18,14 +20,21 @@ export function definePlanCommand(command: Command, io: ProgramIo): void {
     .argument('<sea>', 'a sea file, the name of a preset, or a saved plan')
     .option('--json', 'print the plan as JSON')
     .option('--save <file>', 'write the plan to a file that bake takes in place of the sea')
+    .addOption(threadsOption())
     .addHelpText('after', () => `\n${seaDefaultsHelp()}`)
     .action(async (sea: string, options: PlanCommandOptions) => {
-      const { plan } = plannedInput(io, sea).planned;
+      const { threads } = options;
+      const { planned } = plannedInput(io, sea);
+      // A saved plan leaves nothing open: processes that share it must not each survey the loop.
+      const { plan } =
+        options.save === undefined
+          ? planned
+          : await watchedRun(io, false, (watch) => surveyedBake(planned, { threads, ...watch }));
       if (options.save !== undefined) {
         savePlan(plan, options.save);
         say(io, `Plan saved to ${options.save}`);
       }
-      await printPlan(io, plan, { json: options.json === true, threads: machineThreads() });
+      await printPlan(io, plan, { json: options.json === true, threads });
     });
 }
 

@@ -22,6 +22,12 @@ const COMMANDS: readonly CommandEntry[] = [
     load: async () => (await import('./bake-command.ts')).defineBakeCommand,
   },
   {
+    name: 'gather',
+    summary: 'join the shards of a bake: check them, make foam and the manifest',
+    usage: '[options] <folder>',
+    load: async () => (await import('./gather-command.ts')).defineGatherCommand,
+  },
+  {
     name: 'plan',
     summary: 'Show what a bake would make, cost and lose.',
     usage: '[options] <sea>',

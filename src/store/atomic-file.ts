@@ -7,6 +7,7 @@ import {
   openSync,
   renameSync,
   rmSync,
+  statSync,
   writeSync,
 } from 'node:fs';
 import { dirname, join } from 'node:path';
@@ -89,7 +90,7 @@ function placeFile(
   const data = typeof bytes === 'string' ? new TextEncoder().encode(bytes) : bytes;
   let action: FileAction = 'create';
   try {
-    if (makeFolders) mkdirSync(parent, { recursive: true });
+    if (makeFolders) makeFolder(parent);
     const file = openSync(temporary, 'wx');
     try {
       action = 'write';
@@ -114,11 +115,31 @@ function placeFile(
 export function makeFolders(folder: string, relativePaths: readonly string[]): void {
   for (const path of relativePaths.map((relativePath) => insidePath(folder, relativePath))) {
     try {
-      mkdirSync(path, { recursive: true });
+      makeFolder(path);
     } catch (cause) {
       throw fileError('create', path, cause);
     }
   }
+}
+
+/**
+ * Makes a folder and those above it. Not by the system's recursive call, which says that there is no such folder where
+ * the truth is that the disk is read-only.
+ */
+export function makeFolder(path: string): void {
+  try {
+    mkdirSync(path);
+  } catch (cause) {
+    const parent = dirname(path);
+    if (systemCode(cause) === 'ENOENT' && parent !== path) {
+      makeFolder(parent);
+      makeFolder(path);
+    } else if (!isFolder(path)) throw cause;
+  }
+}
+
+function isFolder(path: string): boolean {
+  return statSync(path, { throwIfNoEntry: false })?.isDirectory() ?? false;
 }
 
 /** A single write may take only part of the bytes: on a full disk, or beyond 2 GiB. */

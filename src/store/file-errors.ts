@@ -1,4 +1,4 @@
-import { CannotCreateError, type LoopswellError, ReadWriteError } from '../errors.ts';
+import { CannotCreateError, ReadWriteError } from '../errors.ts';
 
 /** What was being done to a file or folder when the system refused. */
 export type FileAction = 'create' | 'write' | 'read' | 'remove';
@@ -49,14 +49,15 @@ export function systemCode(cause: unknown): string {
 
 /**
  * The error to raise when the system refused to do something to a file: what, where, why and what to do.
- * @param cause what the call of node:fs threw
- * @returns CannotCreateError (73) where the place cannot be used for output, else ReadWriteError (74)
+ * @param cause what was thrown: by a call of node:fs, or by our own code in between, which is no trouble with a file
+ * @returns CannotCreateError (73) where the place cannot be used for output, else ReadWriteError (74); an error that
+ *   is not the system's as it is
  */
-export function fileError(action: FileAction, path: string, cause: unknown): LoopswellError {
+export function fileError(action: FileAction, path: string, cause: unknown): unknown {
   const code = systemCode(cause);
-  const reason = cause instanceof Error ? cause.message : String(cause);
-  const [trouble, remedy] = ADVICE[code] ?? [reason, 'Check the disk and run the same command again.'];
-  const message = `Cannot ${action} ${path}: ${trouble}${code === '' ? '' : ` (${code})`}. ${remedy}`;
+  if (code === '' || !(cause instanceof Error)) return cause;
+  const [trouble, remedy] = ADVICE[code] ?? [cause.message, 'Check the disk and run the same command again.'];
+  const message = `Cannot ${action} ${path}: ${trouble} (${code}). ${remedy}`;
   const cannotCreate = (action === 'create' || action === 'write') && UNUSABLE_PLACE.has(code);
   return cannotCreate ? new CannotCreateError(message, { cause }) : new ReadWriteError(message, { cause });
 }

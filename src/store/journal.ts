@@ -1,7 +1,8 @@
-import { closeSync, fsyncSync, ftruncateSync, mkdirSync, openSync, readFileSync, writeSync } from 'node:fs';
+import { closeSync, fsyncSync, ftruncateSync, openSync, readFileSync, writeSync } from 'node:fs';
 import { dirname } from 'node:path';
 import { InternalError } from '../errors.ts';
 import { sha256 } from '../hash.ts';
+import { makeFolder } from './atomic-file.ts';
 import { fileStatus, filesIn } from './bake-folder.ts';
 import { fileError, systemCode } from './file-errors.ts';
 import { insidePath } from './safe-path.ts';
@@ -73,7 +74,7 @@ export function newJournal<Entry extends object>(folder: string, name: string): 
 
 function created(path: string): number {
   try {
-    mkdirSync(dirname(path), { recursive: true });
+    makeFolder(dirname(path));
     return openSync(path, 'ax');
   } catch (cause) {
     throw fileError('create', path, cause);

@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { foamSums } from '../../../src/bake/foam-loop.ts';
+import { foamBuffers, foamSums } from '../../../src/bake/foam-loop.ts';
 import { PNG } from '../../../src/codec/png.ts';
 import type { ManifestFoam } from '../../../src/manifest/manifest.ts';
 import type { CascadeFoam, PlannedCascade } from '../../../src/plan/plan.ts';
@@ -112,6 +112,7 @@ it('sums of foam codes add up to the same over any split of the rows', () => {
   const codes = Array.from({ length: cascade.loop.frameCount }, (_, n) =>
     Uint16Array.from({ length: N * N }, (_, i) => ((i + 1) * 40503 + n * 9973) % 65536),
   );
+  const buffers = foamBuffers();
   const sums = (fromRow: number, toRow: number, stride: number) =>
     foamSums(
       plan,
@@ -120,6 +121,7 @@ it('sums of foam codes add up to the same over any split of the rows', () => {
       { fromRow, toRow, stride },
       [0, 9000, 30_000, 65_535],
       (frame, from, to) => codes[frame].subarray(from * N, to * N),
+      buffers,
     );
   for (const stride of [1, 2]) {
     const whole = sums(0, N, stride);

@@ -264,17 +264,26 @@ describe('statuses of bake', () => {
     });
   });
 
-  it('75 at once after a second signal', async () => {
+  it.each([
+    ['at once after a second signal', 0.6, [EXIT_STATUS.stopped]],
+    ['after the frames in flight where two signals come at one moment', 0.4, []],
+  ])('75 %s', async (_, apartS, exits) => {
     await onBench(async ({ sea, folder }) => {
       let asked = 0;
+      let timeS = 0;
       const io = capturedIo({
         secondsNow: () => {
-          if (++asked === 4) for (const name of ['SIGINT', 'SIGINT']) io.signal(name);
-          return 0;
+          if (++asked === 4) {
+            io.signal('SIGINT');
+            timeS = apartS;
+            io.signal('SIGINT');
+          }
+          return timeS;
         },
       });
-      await outcomeOf(['bake', sea, '-o', folder, '--threads', '0'], io);
-      expect(io.exits).toEqual([EXIT_STATUS.stopped]);
+      const { status } = await outcomeOf(['bake', sea, '-o', folder, '--threads', '0'], io);
+      expect(status).toBe(EXIT_STATUS.stopped);
+      expect(io.exits).toEqual(exits);
     });
   });
 

@@ -13,6 +13,7 @@ import {
   planBake,
   planText,
   SEA_WATER_DEFAULTS,
+  surveyedBake,
 } from '../../../src/index.ts';
 import { TINY_SEA_YAML } from '../../support/tiny-seas.ts';
 import { CapturedStream, capturedIo, inNewFolder, outcomeOf } from './captured-io.ts';
@@ -41,14 +42,15 @@ describe('plan', () => {
     expect(parsePlan(stdout, 'stdout')).toEqual(POND);
   });
 
-  it('saves the plan, and shows a saved plan as it shows its sea', async () => {
+  it('saves the plan with its ranges surveyed, and shows a saved plan as it shows its sea', async () => {
     await inNewFolder(async (folder) => {
       const path = join(folder, 'deep', 'pond.json');
-      const saved = await outcomeOf(['plan', 'mobile-pond', '--save', path]);
+      const saved = await outcomeOf(['plan', 'mobile-pond', '--threads', '0', '--save', path]);
       expect(saved.status).toBe(EXIT_STATUS.done);
       expect(saved.stderr).toContain(path);
-      expect(readFileSync(path, 'utf8')).toBe(planText(POND));
-      expect((await outcomeOf(['plan', path])).stdout).toBe(saved.stdout);
+      const { plan } = await surveyedBake(planBake(loadSea('mobile-pond')), { threads: 0 });
+      expect(readFileSync(path, 'utf8')).toBe(planText(plan));
+      expect((await outcomeOf(['plan', path, '--threads', '0'])).stdout).toBe(saved.stdout);
     });
   });
 
@@ -56,7 +58,8 @@ describe('plan', () => {
     await inNewFolder(async (folder) => {
       const file = join(folder, 'file');
       writeFileSync(file, '');
-      const { status, stdout } = await outcomeOf(['plan', 'mobile-pond', '--save', join(file, 'pond.json')]);
+      const save = ['--threads', '0', '--save', join(file, 'pond.json')];
+      const { status, stdout } = await outcomeOf(['plan', 'mobile-pond', ...save]);
       expect(status).toBe(EXIT_STATUS.cannotCreate);
       expect(stdout).toBe('');
     });

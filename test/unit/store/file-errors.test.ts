@@ -1,4 +1,5 @@
 import { expect, it } from 'vitest';
+import type { LoopswellError } from '../../../src/errors.ts';
 import { fileError, systemCode } from '../../../src/store/file-errors.ts';
 
 /** An error as node:fs throws it. */
@@ -22,21 +23,25 @@ it.each([
   ['remove', 'EPERM', 74],
 ] as const)('%s refused with %s leads to exit status %i', (action, code, status) => {
   const cause = systemError(code);
-  const error = fileError(action, '/bake/c0/frame', cause);
+  const error = fileError(action, '/bake/c0/frame', cause) as LoopswellError;
   expect(error.exitStatus).toBe(status);
   expect(error.message).toMatch(new RegExp(`^Cannot ${action} /bake/c0/frame: .+ \\(${code}\\)\\. .+\\.$`));
   expect(error.cause).toBe(cause);
 });
 
 it('says that a full disk is no loss', () => {
-  expect(fileError('write', 'x', systemError('ENOSPC')).message).toContain('it resumes');
+  expect((fileError('write', 'x', systemError('ENOSPC')) as Error).message).toContain('it resumes');
 });
 
 it('passes on what the system says where the code is not known', () => {
-  expect(fileError('write', 'x', systemError('EWEIRD')).message).toContain(
+  expect((fileError('write', 'x', systemError('EWEIRD')) as Error).message).toContain(
     'EWEIRD: as the system words it (EWEIRD)',
   );
-  expect(fileError('read', 'x', 'odd').message).toContain('Cannot read x: odd.');
-  expect(systemCode(new Error('none'))).toBe('');
-  expect(systemCode(null)).toBe('');
+});
+
+it('leaves an error alone that is not the system’s', () => {
+  for (const cause of [new RangeError('Array buffer allocation failed'), new TypeError('no'), 'odd', null]) {
+    expect(fileError('read', 'x', cause)).toBe(cause);
+    expect(systemCode(cause)).toBe('');
+  }
 });
