@@ -31,6 +31,9 @@ export function notApplicable(reason: string): Verdict {
   return { measured: null, unit: '', limit: null, reason, passed: null, details: [] };
 }
 
+/** Why flat water says nothing about waves. */
+export const FLAT = 'the water is flat';
+
 /** The same verdict as the answer to a question of its own. */
 export function answering(question: string, answer: Verdict): Verdict {
   return { ...answer, question };

@@ -1,4 +1,5 @@
 import { afterAll, describe, expect, it } from 'vitest';
+import { CHECKS } from '../../src/verify/registry.ts';
 import { verifyBake } from '../../src/verify/verify-bake.ts';
 import { bakeShelf, SMALL_SEAS } from '../support/small-bakes.ts';
 
@@ -11,5 +12,29 @@ describe('a sound bake', () => {
     const failed = report.checks.filter(({ passed }) => passed === false);
     expect(failed).toEqual([]);
     expect(report.passed).toBe(true);
+  });
+
+  it('of every map leaves no question open', async () => {
+    const { checks } = await verifyBake(await shelf.bake('every map'));
+    expect(checks.filter(({ passed }) => passed === null)).toEqual([]);
+    for (const { name } of CHECKS) expect(checks.map((check) => check.name)).toContain(name);
+  });
+
+  it.each([
+    ['height alone', ['horizontal', 'derivatives', 'foam']],
+    ['slope alone', ['heights', 'dispersion', 'direction', 'spectrum', 'horizontal', 'derivatives', 'foam']],
+  ])('says what it cannot judge without the map for it: %s', async (name, open) => {
+    const { checks } = await verifyBake(await shelf.bake(name));
+    const found = checks.filter(({ passed }) => passed === null).map((check) => check.name);
+    expect([...new Set(found)]).toEqual(expect.arrayContaining(open));
+    // Not judged at all, or in part: the figure of the whole sea needs a height.
+    expect([...new Set(found)].filter((check) => !open.includes(check))).toEqual(
+      name === 'slope alone' ? ['figures'] : [],
+    );
+  });
+
+  it.each([1, 2, 3, 5])('of %i frames passes', async (frames) => {
+    const report = await verifyBake(await shelf.bake('tiny', { loop: { frames, frameRate: 4 } }));
+    expect(report.checks.filter(({ passed }) => passed === false)).toEqual([]);
   });
 });

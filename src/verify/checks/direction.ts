@@ -3,7 +3,7 @@ import { exponentialSumBounds, FALSE_ALARM_RATE } from '../chance.ts';
 import type { Check } from '../check.ts';
 import type { MeasuredWaves } from '../measured-waves.ts';
 import { type BandWave, forEachBandWave } from '../surface.ts';
-import { answering, notApplicable, type Verdict, verdict } from '../verdict.ts';
+import { answering, FLAT, notApplicable, type Verdict, verdict } from '../verdict.ts';
 
 /**
  * Energy-weighted mean direction of travel and spread, of the waves as the moving height shows them: a wave counts
@@ -23,6 +23,7 @@ export const DIRECTION: Check = {
         return {
           verdicts({ waves, withoutWaves }) {
             if (waves === null) return [notApplicable(withoutWaves)];
+            if (waves.onShell === 0 || facts.target().m0 === 0) return [notApplicable(FLAT)];
             const [mean, spread] = directionVerdicts(facts, waves);
             return [mean, answering('Do they spread about that direction as they were asked to?', spread)];
           },

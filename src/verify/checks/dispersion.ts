@@ -1,6 +1,6 @@
 import type { Check } from '../check.ts';
 import { engineNoise } from '../rounding.ts';
-import { notApplicable, verdict } from '../verdict.ts';
+import { FLAT, notApplicable, verdict } from '../verdict.ts';
 
 /**
  * The share of the height's variance that does not turn as the dispersion relation says, quantised to whole turns per
@@ -19,6 +19,7 @@ export const DISPERSION: Check = {
           verdicts({ waves, withoutWaves }) {
             if (waves === null) return [notApplicable(withoutWaves)];
             const { meanSquare, onShell, rounding } = waves;
+            if (meanSquare === 0) return [notApplicable(FLAT)];
             const allowed = ROUNDING_MARGIN * (rounding / meanSquare) + SUMMATION + engine * engine;
             return [
               verdict(

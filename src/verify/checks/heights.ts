@@ -4,7 +4,7 @@ import { exponentialSumBounds, FALSE_ALARM_RATE } from '../chance.ts';
 import type { Check } from '../check.ts';
 import { isStanding, type MeasuredWaves } from '../measured-waves.ts';
 import { engineNoise } from '../rounding.ts';
-import { answering, type Limit, notApplicable, type Verdict, verdict } from '../verdict.ts';
+import { answering, notApplicable, type Verdict, verdict } from '../verdict.ts';
 
 /**
  * Significant height 4 sqrt(variance) of the height as written, over the whole loop, against what the manifest expects.
@@ -105,27 +105,21 @@ function heightVerdict(cascades: readonly CascadeHeight[], expectedHeightM: numb
   const measured = sum(({ variance }) => variance);
   const slack = sum(({ rounding, standing }) => rounding + standing);
   const chance = cascades.flatMap((one) => one.chance);
-  const side = measured < expected ? 0 : 1;
+  const below = measured < expected;
   let reach = slack;
   let reason = 'matched height: exact but for the rounding of the files';
   if (chance.length > 0) {
     const mean = chance.reduce((total, P) => total + P, 0);
-    reach += Math.abs(exponentialSumBounds(chance, FALSE_ALARM_RATE)[side] - mean);
+    reach += Math.abs(exponentialSumBounds(chance, FALSE_ALARM_RATE)[below ? 0 : 1] - mean);
     reason = `one realisation of ${effectiveWaves(chance).toFixed(0)} effective waves stays inside this but for once in ${1 / FALSE_ALARM_RATE}`;
   } else if (slack > sum(({ rounding }) => rounding)) {
     reason =
       'every wave has its expected amplitude; standing waves add by their phases, the files are rounded';
   }
-  const limit: Limit = {
-    limit:
-      100 *
-      (Math.sqrt(Math.max(0, 1 + (side === 0 ? -1 : 1) * (reach / expected))) - 1) *
-      (side === 0 ? -1 : 1),
-    unit: '%',
-    reason,
-  };
-  const error = 100 * (Math.sqrt(measured / expected) - 1);
-  return verdict(Math.abs(error), limit, [
+  const bound = Math.max(0, expected + (below ? -reach : reach));
+  const inPercent = (variance: number): number =>
+    variance === expected ? 0 : 100 * Math.abs(Math.sqrt(variance / expected) - 1);
+  return verdict(inPercent(measured), { limit: inPercent(bound), unit: '%', reason }, [
     `${(4 * Math.sqrt(measured)).toPrecision(6)} m measured, ${expectedHeightM.toPrecision(6)} m expected`,
   ]);
 }

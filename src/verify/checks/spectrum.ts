@@ -3,7 +3,7 @@ import { exponentialSumBounds, FALSE_ALARM_RATE } from '../chance.ts';
 import type { Check } from '../check.ts';
 import type { MeasuredWaves } from '../measured-waves.ts';
 import { forEachBandWave } from '../surface.ts';
-import { answering, firstOf, notApplicable, type Verdict, verdict } from '../verdict.ts';
+import { answering, FLAT, firstOf, notApplicable, type Verdict, verdict } from '../verdict.ts';
 
 /**
  * Variance by bands of wavenumber, measured against what the asked-for spectrum gives the waves of the tile: bands of a
@@ -19,6 +19,7 @@ export const SPECTRUM: Check = {
         return {
           verdicts({ waves, withoutWaves }) {
             if (waves === null) return [notApplicable(withoutWaves)];
+            if (waves.onShell === 0 || facts.target().m0 === 0) return [notApplicable(FLAT)];
             return [
               bandVerdict(facts, waves),
               answering('Is there no wave where the spectrum has none?', emptyVerdict(facts, waves)),
