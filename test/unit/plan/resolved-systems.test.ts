@@ -1,7 +1,10 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { resolvedSystems, travelDirection } from '../../../src/plan/systems.ts';
+import { significantHeight } from '../../../src/spectrum/moments.ts';
+import { frequencySpectrum } from '../../../src/spectrum/registry.ts';
 import { seaOf, swellKeys, windSeaKeys } from '../../support/planned-seas.ts';
+import { expectRelative, MOMENT } from '../../support/tolerances.ts';
 
 const DEGREE = Math.PI / 180;
 
@@ -43,5 +46,14 @@ describe('resolved systems', () => {
     expect(windSea.towardRad).toBeCloseTo(20 * DEGREE, 12);
     expect(swell.towardRad).toBeCloseTo(-100 * DEGREE, 12);
     expect([windSea.againstShare, swell.againstShare]).toEqual([0.2, 1]);
+  });
+
+  it.each([2, 5, 20, 100])('of a stated height and period have both on %i m of water', (depth) => {
+    const stated = { kind: 'wind-sea', spectrum: 'tma', significantHeight: 0.3, peakPeriod: 4, windSpeed: 9 };
+    const sea = seaOf([stated], { water: { depth } });
+    const spectrum = frequencySpectrum(resolvedSystems(sea)[0].spectrum, sea.water);
+    expectRelative(significantHeight(spectrum), 0.3, MOMENT, 'height');
+    // The depth factor moves the peak of its parent; the search for a maximum is right to the square root of an ulp.
+    expectRelative((2 * Math.PI) / spectrum.omegaPeak, 4, 1e-6, 'peak period');
   });
 });
