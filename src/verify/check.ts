@@ -20,7 +20,7 @@ export interface Check {
 }
 
 /** A check at work on one bake. */
-export interface Inspection {
+interface Inspection {
   /** Takes up a cascade; cascades come one after another. */
   readonly cascade: (facts: CascadeFacts) => CascadeInspection;
   /** Verdicts on the bake as a whole, after all cascades. */

@@ -24,7 +24,7 @@ export interface Surface {
 }
 
 /** Mean square errors of a surface's fields, from the rounding of the files they come from. */
-export interface SurfaceNoise {
+interface SurfaceNoise {
   readonly Sx: number;
   readonly Sy: number;
   readonly Dxx: number;

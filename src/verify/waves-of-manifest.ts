@@ -12,13 +12,13 @@ import type { CascadeWaves } from '../waves/wave-amplitudes.ts';
 import { MANIFEST_PATH } from './manifest-file.ts';
 
 /** The water a bake's waves run on. */
-export function waterOfManifest({ sea: { water } }: Manifest): Water {
+function waterOfManifest({ sea: { water } }: Manifest): Water {
   const { depthM, gravityMps2, densityKgpm3, surfaceTensionNpm } = water;
   return { depthM: depthM === 'deep' ? Infinity : depthM, gravityMps2, densityKgpm3, surfaceTensionNpm };
 }
 
 /** The current a bake's waves run on. */
-export function currentOfManifest({ sea: { water } }: Manifest): Current {
+function currentOfManifest({ sea: { water } }: Manifest): Current {
   return { eastMps: water.currentEastMps, northMps: water.currentNorthMps };
 }
 

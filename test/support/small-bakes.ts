@@ -10,7 +10,7 @@ import { seaFromObject } from '../../src/sea/parse.ts';
 type Keys = Readonly<Record<string, unknown>>;
 
 /** A wind sea of 2.4 s with foam; two cascades, displacement as half EXR, normals and foam as 8-bit PNG. */
-export const SMALL_SEA_KEYS: Keys = Object.freeze({
+const SMALL_SEA_KEYS: Keys = Object.freeze({
   seaFile: 1,
   title: 'Small wind sea',
   seed: 11,
