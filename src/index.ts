@@ -71,6 +71,7 @@ export type {
   SeaReport,
   SystemReport,
 } from './plan/plan.ts';
+export { ENGINE_NAMES } from './plan/plan.ts';
 export {
   PLAN_DEFAULTS,
   type PlannedBake,

@@ -16,10 +16,10 @@ import type { Loop, MapName } from '../sea/sea.ts';
 import { CAUTION } from '../version.ts';
 import { bandLimits } from '../waves/band.ts';
 import { nyquistWavenumber, wavenumberStep } from '../waves/lattice.ts';
-import { decodedChannels } from './cascade-maker.ts';
 import { breakingJ, type FoamLevel } from './foam-level.ts';
 import type { FrameEntry } from './journal-entry.ts';
 import { isCodesPath } from './paths.ts';
+import { writtenChannels } from './written-channels.ts';
 
 /**
  * The manifest of a finished bake. Statistics are added in the order of frames, so that they come out the same to the
@@ -204,7 +204,7 @@ function manifestMap(
     return own === undefined ? [] : [own];
   });
   const texels = cascade.resolution ** 2 * frames.length;
-  const channels = decodedChannels(planned, undefined).map(
+  const channels = writtenChannels(planned).map(
     ({ name, quantity, unit, decode }, c): ManifestChannel => ({
       name,
       quantity,

@@ -1,135 +1,91 @@
-import { codecFor } from '../codec/registry.ts';
-import { float64Engine } from '../field/float64-engine.ts';
-import type { FieldName, FrameFields } from '../field/frame-fields.ts';
-import { type Synthesis, synthesis } from '../field/synthesis.ts';
-import type { ChannelSpec, Decode, Image } from '../image/image.ts';
-import { type ChannelStatistics, ditherPattern, encodedMap } from '../maps/encoded-map.ts';
+import { UnavailableError } from '../errors.ts';
+import { type Float32Engine, float32Engine } from '../field/float32-engine.ts';
+import type { FieldName } from '../field/frame-fields.ts';
+import type { SynthesisOptions } from '../field/synthesis.ts';
+import { simdAvailable } from '../kernel/kernel-binary.ts';
+import { ditherPattern, type EncodedMap, type MapStorage } from '../maps/encoded-map.ts';
 import { FOAM_FIELDS, FRAME_MAPS, type FrameMapName } from '../maps/quantity-values.ts';
-import { fillJacobian } from '../maps/surface.ts';
-import { isSurveyed } from '../plan/encodings.ts';
-import type { CascadeFoam, Plan, PlannedCascade, PlannedMap } from '../plan/plan.ts';
-import { CAUTION, VERSION } from '../version.ts';
+import type { EngineName, Plan, PlannedCascade, PlannedMap } from '../plan/plan.ts';
 import type { WaveAmplitudes } from '../waves/wave-amplitudes.ts';
+import { float32Maker } from './float32-maker.ts';
+import { float64Maker } from './float64-maker.ts';
+import { writtenChannels } from './written-channels.ts';
 
-/** The images of any frame of one cascade. Holds the cascade's buffers; one caller at a time. */
+/** The maps of any frame of one cascade. Holds the cascade's buffers; one caller at a time. */
 export interface CascadeMaker {
-  fields(frame: number): FrameFields;
-  /** One map of the frame whose fields are given. */
-  map(planned: PlannedMap, fields: FrameFields, surveyed: readonly Decode[] | undefined): MadeMap;
+  /** Turns to frame n of the loop; the other calls speak of that frame, until the next turn of any maker of the thread. */
+  turnTo(n: number): void;
+  /** All maps but foam, in the plan's order, one when the last was taken. */
+  maps(): Iterable<EncodedMap & { readonly planned: PlannedMap }>;
   /** Largest magnitude of each channel of a map, in the channel's unit; of J - 1 for `jacobian`. */
-  extents(planned: PlannedMap, fields: FrameFields): readonly number[];
-  /** J of the frame as 16-bit codes, field order; the maker's own buffer. */
-  jacobianCodes(fields: FrameFields, foam: CascadeFoam): Uint16Array;
+  extents(planned: PlannedMap): readonly number[];
+  /** J as 16-bit codes, row 0 south; the maker's own buffer. */
+  jacobianCodes(): Uint16Array;
 }
 
-export interface MadeMap {
-  readonly image: Image;
-  readonly statistics: readonly ChannelStatistics[];
+/** What a maker is made from. */
+export interface MakerParts {
+  readonly plan: Plan;
+  readonly cascade: PlannedCascade;
+  readonly waves: WaveAmplitudes;
+  readonly options: SynthesisOptions;
+  /** Maps that frames make on their own: all but foam. */
+  readonly frameMaps: readonly PlannedMap[];
+  /** How a map is stored; dither patterns are made once. */
+  readonly storage: (planned: PlannedMap) => MapStorage;
 }
 
-/**
- * Sets up one cascade for making frames.
- *
- * @param plan the plan
- * @param cascade one of its cascades
- * @param waves the cascade's wave amplitudes
- */
-export function cascadeMaker(plan: Plan, cascade: PlannedCascade, waves: WaveAmplitudes): CascadeMaker {
-  const N = cascade.resolution;
+/** Makes the makers of one thread, which share the float32 engine's memory. */
+export function cascadeMakers(plan: Plan, waves: readonly WaveAmplitudes[]): (c: number) => CascadeMaker {
+  requireEngine(plan.engine);
+  const makers = new Map<number, CascadeMaker>();
+  let engine: Float32Engine | null = null;
+  return (c) => {
+    const made = makers.get(c);
+    if (made !== undefined) return made;
+    const parts = makerParts(plan, plan.cascades[c], waves[c]);
+    if (plan.engine === 'float32') engine ??= float32Engine();
+    const maker = engine === null ? float64Maker(parts) : float32Maker(parts, engine);
+    makers.set(c, maker);
+    return maker;
+  };
+}
+
+/** @throws UnavailableError (69) where this machine cannot run a plan's engine: another would write other bytes */
+export function requireEngine(engine: EngineName): void {
+  if (engine === 'float32' && !simdAvailable()) {
+    throw new UnavailableError(
+      'The float32 engine needs WebAssembly SIMD, which this machine or its Node does not have. Plan the sea with --engine float64, which is slower and runs everywhere.',
+    );
+  }
+}
+
+function makerParts(plan: Plan, cascade: PlannedCascade, waves: WaveAmplitudes): MakerParts {
   const frameMaps = cascade.maps.filter(({ map }) => map !== 'foam');
-  const wanted = new Set<FieldName>(frameMaps.flatMap(({ map }) => FRAME_MAPS[map as FrameMapName].fields));
-  if (cascade.foam !== null) for (const field of FOAM_FIELDS) wanted.add(field);
-  const surface: Synthesis = synthesis(waves, float64Engine(N), {
-    depthM: plan.water.depthM,
-    horizontalScale: plan.shaping.horizontalScale,
-    fields: wanted,
-  });
-  const planes: Float64Array[] = [];
-  const scratch = (index: number): Float64Array => {
-    planes[index] ??= new Float64Array(N * N);
-    return planes[index];
-  };
-  const dithers = new Map<string, readonly Float32Array[]>();
-  const dither = ({ map, dither: wantsDither, channels }: PlannedMap): readonly Float32Array[] | null => {
-    if (!wantsDither) return null;
-    const made = dithers.get(map) ?? channels.map(({ name }) => ditherPattern(N, `${map}.${name}`));
-    dithers.set(map, made);
-    return made;
-  };
-  const codes = new Uint16Array(N * N);
-
+  const fields = new Set<FieldName>(frameMaps.flatMap(({ map }) => FRAME_MAPS[map as FrameMapName].fields));
+  if (cascade.foam !== null) for (const field of FOAM_FIELDS) fields.add(field);
+  const storages = new Map<PlannedMap, MapStorage>();
   return {
-    fields: (frame) => surface.frame(frame),
-    map(planned, fields, surveyed) {
-      const values = FRAME_MAPS[planned.map as FrameMapName].values(fields, scratch);
-      return encodedMap(values, {
-        resolution: N,
-        sample: planned.sample,
-        channels: decodedChannels(planned, surveyed),
-        rowZero: plan.output.rowZero,
-        dither: dither(planned),
-      });
-    },
-    extents(planned, fields) {
-      const values = FRAME_MAPS[planned.map as FrameMapName].values(fields, scratch);
-      return planned.channels.map(({ quantity, unit }) => {
-        const centre = quantity === 'jacobian' ? 1 : 0;
-        const perSi = unit === 'cm' || unit === 'cm/s' ? 100 : 1;
-        let largest = 0;
-        for (const value of values.get(quantity) ?? []) largest = Math.max(largest, Math.abs(value - centre));
-        return largest * perSi;
-      });
-    },
-    jacobianCodes(fields, { jacobianCodes: { zeroJ, stepJ } }) {
-      const J = scratch(0);
-      fillJacobian(J, fields);
-      for (let i = 0; i < J.length; i++) {
-        codes[i] = Math.min(65535, Math.max(0, Math.round((J[i] - zeroJ) / stepJ)));
-      }
-      return codes;
+    plan,
+    cascade,
+    waves,
+    frameMaps,
+    options: { depthM: plan.water.depthM, horizontalScale: plan.shaping.horizontalScale, fields },
+    storage(planned) {
+      const made = storages.get(planned) ?? mapStorage(plan, cascade, planned);
+      storages.set(planned, made);
+      return made;
     },
   };
 }
 
-/** A map's channels with the decode rules a survey found filled in. */
-export function decodedChannels(
-  planned: PlannedMap,
-  surveyed: readonly Decode[] | undefined,
-): readonly ChannelSpec[] {
-  if (isSurveyed(planned)) return planned.channels;
-  return planned.channels.map((channel, c) => ({
-    ...channel,
-    decode: channel.decode ?? (surveyed as Decode[])[c],
-  }));
-}
-
-/** The file of one map of one frame: its path below the bake folder and its bytes. */
-export function encodedFile(
-  plan: Plan,
-  cascade: PlannedCascade,
-  planned: PlannedMap,
-  image: Image,
-  frame: number,
-): { readonly path: string; readonly bytes: Uint8Array } {
-  const frameNumber = plan.loop.firstFrame + frame;
-  const bytes = codecFor(planned.format).encode(image, {
-    software: `loopswell ${VERSION}`,
-    frameRate: cascade.loop.frameRate,
-    frameNumber,
-    comments: `${plan.title}: ${planned.map} of cascade ${cascade.id}. ${CAUTION}`,
-    attributes: {
-      cascade: cascade.id,
-      patchLengthM: cascade.patchLengthM,
-      frameCount: cascade.loop.frameCount,
-      planHash: plan.hash,
-    },
-  });
-  return { path: framePath(planned.pattern, frameNumber), bytes };
-}
-
-/** A printf pattern's path for one frame number, e.g. `c0/foam.%04d.png` and 7: `c0/foam.0007.png`. */
-export function framePath(pattern: string, frameNumber: number): string {
-  return pattern.replace(/%0(\d+)d/, (_, digits: string) =>
-    String(frameNumber).padStart(Number(digits), '0'),
-  );
+function mapStorage(plan: Plan, { resolution }: PlannedCascade, planned: PlannedMap): MapStorage {
+  const { map, sample, channels, dither } = planned;
+  return {
+    resolution,
+    sample,
+    channels: writtenChannels(planned),
+    rowZero: plan.output.rowZero,
+    dither: dither ? channels.map(({ name }) => ditherPattern(resolution, `${map}.${name}`)) : null,
+  };
 }

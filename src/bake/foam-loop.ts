@@ -3,7 +3,7 @@ import { type EncodedMap, encodedMap } from '../maps/encoded-map.ts';
 import { advanceFoam, foamSourceTable, shownFoam } from '../maps/foam.ts';
 import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
 import { loopSeconds } from '../sea/loop-length.ts';
-import { decodedChannels } from './cascade-maker.ts';
+import { writtenChannels } from './written-channels.ts';
 
 /** Reads a cascade's J codes of one frame: rows [fromRow, toRow) of the tile, field order. */
 export type CodeReader = (frame: number, fromRow: number, toRow: number) => Uint16Array;
@@ -80,20 +80,43 @@ export function foamSums(
       for (let x = 0; x < N; x += grid.stride) codes[o++] = block[row * grid.stride * N + x];
     }
   }
-  const state = buffers.state(texels);
+  const breaking = keepBreaking(codes, frameCount, texels, Math.max(...breakingCodes));
+  const state = buffers.state(breaking);
   const sums = breakingCodes.map((breakingCode) => {
     const source = sourceTable(foam, breakingCode);
     state.fill(0);
     let sum = 0;
     for (let n = 0; n < 2 * frameCount; n++) {
-      const at = (n % frameCount) * texels;
-      advanceFoam(state, codes.subarray(at, at + texels), source, d);
+      const at = (n % frameCount) * breaking;
+      advanceFoam(state, codes.subarray(at, at + breaking), source, d);
       if (n < frameCount) continue;
-      for (let i = 0; i < texels; i++) sum += Math.round(shownFoam(state[i], residue) * levels);
+      for (let i = 0; i < breaking; i++) {
+        if (state[i] > residue) sum += Math.round(shownFoam(state[i], residue) * levels);
+      }
     }
     return sum;
   });
   return { texels, sums };
+}
+
+/**
+ * Moves together the texels that break at some frame at a level, in place: most of a sea never does, and foams nowhere.
+ *
+ * @param codes J codes, [frame][texel] before, [frame][breaking texel] after
+ * @returns how many texels break
+ */
+function keepBreaking(codes: Uint16Array, frameCount: number, texels: number, breakingCode: number): number {
+  const lowest = new Uint16Array(codes.subarray(0, texels));
+  for (let n = 1; n < frameCount; n++) {
+    const at = n * texels;
+    for (let i = 0; i < texels; i++) if (codes[at + i] < lowest[i]) lowest[i] = codes[at + i];
+  }
+  const breaking: number[] = [];
+  for (let i = 0; i < texels; i++) if (lowest[i] < breakingCode) breaking.push(i);
+  let o = 0;
+  // What is written lies never behind what is still to be read.
+  for (let n = 0; n < frameCount; n++) for (const i of breaking) codes[o++] = codes[n * texels + i];
+  return breaking.length;
 }
 
 /** Foam images of a run of frames, warmed up by the loop before it. */
@@ -121,7 +144,7 @@ export function* foamImages(
     const made = encodedMap(new Map([['foam', shown]]), {
       resolution: N,
       sample: planned.sample,
-      channels: decodedChannels(planned, undefined),
+      channels: writtenChannels(planned),
       rowZero: plan.output.rowZero,
       dither: null,
     });

@@ -7,8 +7,9 @@ import { writeFileAtomic } from '../store/atomic-file.ts';
 import { isIntact } from '../store/bake-folder.ts';
 import { fillFromFiles } from '../store/scratch.ts';
 import type { WaveAmplitudes } from '../waves/wave-amplitudes.ts';
-import { type CascadeMaker, cascadeMaker, encodedFile } from './cascade-maker.ts';
+import { type CascadeMaker, cascadeMakers } from './cascade-maker.ts';
 import { secondsNow } from './clock.ts';
+import { encodedFile } from './encoded-file.ts';
 import { type CodeReader, type FoamBuffers, foamBuffers, foamImages, foamSums } from './foam-loop.ts';
 import type {
   FoamJob,
@@ -42,11 +43,11 @@ export interface JobContext {
  */
 export function jobRunner(context: JobContext): (job: Job) => Generator<FrameResult, JobResult> {
   const { plan, waves, folder } = context;
-  const makers = new Map<number, CascadeMaker>();
+  // None where no frames are made: a gather on a machine without the plan's engine is as good as any.
+  let makers: ((c: number) => CascadeMaker) | null = null;
   const maker = (c: number): CascadeMaker => {
-    const made = makers.get(c) ?? cascadeMaker(plan, plan.cascades[c], waves[c]);
-    makers.set(c, made);
-    return made;
+    makers ??= cascadeMakers(plan, waves);
+    return makers(c);
   };
   const readers = new Map<number, CodeReader>();
   const reader = (c: number): CodeReader => {
@@ -82,20 +83,18 @@ function frameResult(job: FrameJob, context: JobContext, maker: CascadeMaker): F
   const files: WrittenFile[] = [];
   const statistics: Partial<Record<MapName, readonly ChannelStatistics[]>> = {};
   const timer = stageTimer();
-  const fields = maker.fields(job.frame);
+  maker.turnTo(job.frame);
   timer.lap('synthesis');
-  for (const planned of cascade.maps) {
-    if (planned.map === 'foam') continue;
-    const made = maker.map(planned, fields, undefined);
-    statistics[planned.map] = made.statistics;
+  for (const { planned, image, statistics: figures } of maker.maps()) {
+    statistics[planned.map] = figures;
     timer.lap('maps');
-    const { path, bytes } = encodedFile(plan, cascade, planned, made.image, job.frame);
+    const { path, bytes } = encodedFile(plan, cascade, planned, image, job.frame);
     timer.lap('encode');
     files.push(written(context, path, bytes));
     timer.lap('write');
   }
   if (cascade.foam !== null) {
-    const codes = maker.jacobianCodes(fields, cascade.foam);
+    const codes = maker.jacobianCodes();
     timer.lap('maps');
     const bytes = new Uint8Array(codes.buffer, codes.byteOffset, codes.byteLength);
     files.push(written(context, codesPath(cascade.id, job.frame), bytes));
@@ -105,9 +104,9 @@ function frameResult(job: FrameJob, context: JobContext, maker: CascadeMaker): F
 }
 
 function surveyResult(job: SurveyJob, cascade: PlannedCascade, maker: CascadeMaker): JobResult {
-  const fields = maker.fields(job.frame);
+  maker.turnTo(job.frame);
   const surveyed = cascade.maps.filter((planned) => !isSurveyed(planned));
-  const extents = surveyed.map((planned) => [planned.map, maker.extents(planned, fields)]);
+  const extents = surveyed.map((planned) => [planned.map, maker.extents(planned)]);
   return { kind: 'survey', extents: Object.fromEntries(extents) };
 }
 

@@ -1,5 +1,5 @@
+import { framePath } from '../manifest/frame-path.ts';
 import type { Plan } from '../plan/plan.ts';
-import { framePath } from './cascade-maker.ts';
 import type { FrameId } from './jobs.ts';
 
 /*

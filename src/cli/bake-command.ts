@@ -1,8 +1,9 @@
 import { join } from 'node:path';
 import { type Command, Option } from 'commander';
-import { BAKE_DEFAULTS, bake, type SyncPolicy, verifyBake } from '../index.ts';
+import { BAKE_DEFAULTS, bake, type EngineName, type SyncPolicy, verifyBake } from '../index.ts';
 import { bakeJson, bakeSummary } from './bake-summary.ts';
 import { coloursOf } from './colours.ts';
+import { engineOption } from './engine-option.ts';
 import { type FrameRange, frameRange } from './frame-range.ts';
 import { type ProgramIo, say, writeResult } from './io.ts';
 import { printPlan } from './plan-command.ts';
@@ -14,6 +15,7 @@ import { requirePassed } from './verdict.ts';
 
 interface BakeCommandOptions {
   readonly output?: string;
+  readonly engine?: EngineName;
   readonly threads: number;
   readonly frames?: FrameRange;
   readonly shard?: ShardRequest;
@@ -31,6 +33,7 @@ export function defineBakeCommand(command: Command, io: ProgramIo): void {
   command
     .argument('<sea>', 'a sea file, the name of a preset, or a saved plan')
     .option('-o, --output <folder>', 'where the files go (default: out/ and the name of the sea)')
+    .addOption(engineOption())
     .addOption(threadsOption())
     .addOption(
       new Option('--frames <a-b>', 'make only these frames; a later bake reuses them').argParser(frameRange),
@@ -52,7 +55,7 @@ export function defineBakeCommand(command: Command, io: ProgramIo): void {
 }
 
 async function runBake(io: ProgramIo, sea: string, options: BakeCommandOptions): Promise<void> {
-  const { name, planned } = plannedInput(io, sea);
+  const { name, planned } = plannedInput(io, sea, options.engine);
   const { plan } = planned;
   const { threads, json = false, quiet = false } = options;
   if (options.dryRun === true) return printPlan(io, plan, { json, threads });

@@ -1,7 +1,8 @@
 import { basename, dirname } from 'node:path';
 import type { Command } from 'commander';
-import { type Plan, planText, surveyedBake, writeFileAtomic } from '../index.ts';
+import { type EngineName, type Plan, planText, surveyedBake, writeFileAtomic } from '../index.ts';
 import { coloursOf } from './colours.ts';
+import { engineOption } from './engine-option.ts';
 import { type ProgramIo, say, writeResult } from './io.ts';
 import { planReport } from './plan-report.ts';
 import { plannedInput } from './planned-input.ts';
@@ -11,6 +12,7 @@ import { seaDefaultsHelp } from './sea-defaults.ts';
 interface PlanCommandOptions {
   readonly json?: boolean;
   readonly save?: string;
+  readonly engine?: EngineName;
   readonly threads: number;
 }
 
@@ -21,10 +23,11 @@ export function definePlanCommand(command: Command, io: ProgramIo): void {
     .option('--json', 'print the plan as JSON')
     .option('--save <file>', 'write the plan to a file that bake takes in place of the sea')
     .addOption(threadsOption())
+    .addOption(engineOption())
     .addHelpText('after', () => `\n${seaDefaultsHelp()}`)
     .action(async (sea: string, options: PlanCommandOptions) => {
       const { threads } = options;
-      const { planned } = plannedInput(io, sea);
+      const { planned } = plannedInput(io, sea, options.engine);
       // A saved plan leaves nothing open: processes that share it must not each survey the loop.
       const { plan } =
         options.save === undefined

@@ -1,11 +1,15 @@
 import {
+  type EngineName,
   isPlanText,
+  PLAN_DEFAULTS,
+  type Plan,
   type PlannedBake,
   parsePlan,
   parseSea,
   planBake,
   plannedBakeOf,
   seaText,
+  UsageError,
 } from '../index.ts';
 import { isTerminal, type ProgramIo } from './io.ts';
 
@@ -19,16 +23,21 @@ export interface PlannedInput {
 /**
  * Reads what the user named and plans it. A large sea takes seconds: a terminal says so meanwhile.
  *
- * @throws InputError, ReadWriteError
+ * @param engine the engine asked for, if one was
+ * @throws InputError, ReadWriteError; UsageError where a saved plan has another engine
  */
-export function plannedInput(io: ProgramIo, pathOrPreset: string): PlannedInput {
+export function plannedInput(
+  io: ProgramIo,
+  pathOrPreset: string,
+  engine: EngineName | undefined,
+): PlannedInput {
   const { name, source, text } = seaText(pathOrPreset);
   const isWatched = isTerminal(io.stderr, io.env);
   if (isWatched) io.stderr.write(`planning ${name} ...`);
   try {
     const planned = isPlanText(text)
-      ? plannedBakeOf(parsePlan(text, source), source)
-      : planBake(parseSea(text, { source }));
+      ? plannedBakeOf(planWithEngine(parsePlan(text, source), engine, source), source)
+      : planBake(parseSea(text, { source }), { engine: engine ?? PLAN_DEFAULTS.engine });
     return { name, planned };
   } finally {
     if (isWatched) io.stderr.write(CLEARED_LINE);
@@ -37,3 +46,10 @@ export function plannedInput(io: ProgramIo, pathOrPreset: string): PlannedInput 
 
 /** Back to the first column and everything behind it erased (ECMA-48: CR, EL). */
 const CLEARED_LINE = '\r\u001b[K';
+
+function planWithEngine(plan: Plan, engine: EngineName | undefined, source: string): Plan {
+  if (engine === undefined || engine === plan.engine) return plan;
+  throw new UsageError(
+    `${source} was planned for the ${plan.engine} engine: plan the sea again with --engine ${engine}.`,
+  );
+}

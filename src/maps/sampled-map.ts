@@ -56,6 +56,21 @@ export function sampledMaps(
   });
 }
 
+/**
+ * Largest magnitude of quantities over the tile of the current frame, SI; of J - 1 for `jacobian`.
+ *
+ * @throws InternalError where a value is not finite
+ */
+export function largestMagnitudes(
+  synthesis: Float32Synthesis,
+  quantities: readonly Quantity[],
+): readonly number[] {
+  const largest = synthesis.largest(quantities.map((quantity) => SAMPLED_VALUES[quantity] as SampledValue));
+  const bad = largest.findIndex((value) => !Number.isFinite(value));
+  if (bad >= 0) throw new InternalError(`${quantities[bad]} is not a number somewhere on the tile`);
+  return largest;
+}
+
 /** What the kernel has to do for a map. */
 export function samplesRequest(storage: MapStorage, target: SamplesTarget): SamplesRequest {
   const { sample, channels, rowZero, dither } = storage;

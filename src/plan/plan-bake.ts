@@ -29,7 +29,7 @@ export interface PlanOptions {
   readonly engine?: EngineName;
 }
 
-export const PLAN_DEFAULTS: Readonly<Required<PlanOptions>> = Object.freeze({ engine: 'float64' });
+export const PLAN_DEFAULTS: Readonly<Required<PlanOptions>> = Object.freeze({ engine: 'float32' });
 
 /** A plan and the waves it was made with, so that a bake need not draw them again. */
 export interface PlannedBake {

@@ -5,8 +5,12 @@ import type { Band } from '../waves/band.ts';
 import type { FieldDeviations } from '../waves/field-deviations.ts';
 import type { WaveSystem } from '../waves/wave-system.ts';
 
-/** Names of the transform engines. Part of the plan: two engines round differently, so they write different bytes. */
-export type EngineName = 'float64';
+/**
+ * Transform engines. Part of the plan: two engines round differently, so they write different bytes. `float32` is
+ * WebAssembly SIMD; `float64` is the reference, slower, and runs everywhere.
+ */
+export const ENGINE_NAMES = ['float32', 'float64'] as const;
+export type EngineName = (typeof ENGINE_NAMES)[number];
 
 /**
  * Every decision made before a frame. Plain, frozen and JSON-able through `planText`/`parsePlan`. `hash` covers all

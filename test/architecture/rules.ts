@@ -33,6 +33,7 @@ const ROWS: Readonly<Record<string, readonly string[]>> = {
     'store',
     'codec',
     'maps',
+    'kernel',
     'field',
     'plan',
     'sea',
