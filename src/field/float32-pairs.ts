@@ -1,4 +1,4 @@
-import { STRIP_ROW, stripsBytes } from '../kernel/wave/layout.ts';
+import { LINE, stripsBytes } from '../kernel/wave/layout.ts';
 import type { WaveProgram } from '../kernel/wave/wave-kernel.ts';
 import type { Float32Waves } from './float32-waves.ts';
 import type { FieldName } from './frame-fields.ts';
@@ -137,9 +137,9 @@ export function pairStore(
       const pair = FIELD_PAIRS.find(({ first, second }) => field === first || field === second) as FieldPair;
       const address = strips(pair);
       if (field === pair.first) return { address, unscale: 1 };
-      if (field !== 'strainEastNorth') return { address: address + STRIP_ROW / 2, unscale: 1 };
+      if (field !== 'strainEastNorth') return { address: address + LINE / 2, unscale: 1 };
       const { shearScale } = sources().waves;
-      return { address: address + STRIP_ROW / 2, unscale: shearScale === 0 ? 0 : 1 / shearScale };
+      return { address: address + LINE / 2, unscale: shearScale === 0 ? 0 : 1 / shearScale };
     },
   };
 }

@@ -7,14 +7,19 @@
 export const COMPLEX_VECTOR = 32;
 
 /**
- * A strip holds 16 neighbouring columns of a spectrum or of a pair of fields, row by row, so that a pass down the
- * columns stays within a few memory pages and a whole strip in the second cache. Complex vectors in a row of it:
+ * A line is a cache line of a strip: the values of 8 neighbouring columns in one row, as two complex vectors of a
+ * spectrum, or 8 values of one field and 8 of its partner.
  */
-export const STRIP_VECTORS = 4;
-export const STRIP_COLUMNS: number = 4 * STRIP_VECTORS;
+export const LINE = 64;
+export const LINE_VECTORS: number = LINE / COMPLEX_VECTOR;
 
-/** One row of a strip, bytes: two cache lines. */
-export const STRIP_ROW: number = STRIP_VECTORS * COMPLEX_VECTOR;
+/**
+ * A strip holds 16 neighbouring columns row by row, each row two lines, so that a pass down the columns stays within a
+ * few memory pages and a whole strip in the second cache.
+ */
+export const STRIP_ROW: number = 2 * LINE;
+export const STRIP_VECTORS: number = STRIP_ROW / COMPLEX_VECTOR;
+export const STRIP_COLUMNS: number = 4 * STRIP_VECTORS;
 
 /**
  * Bytes between strips that keep equal rows of all strips out of one cache set: without them a row of a 1024-wide
@@ -53,8 +58,8 @@ export const TRANSFORM_PLAN = {
   planColumnOrder: 36,
   /** Address of a work row: N complex values. */
   planWorkRow: 40,
-  /** Address of a work strip. */
-  planWorkStrip: 44,
+  /** Address of work rows of columns: up to a strip. */
+  planWorkRows: 44,
   planBytes: 64,
 } as const;
 

@@ -27,7 +27,7 @@ export function transformPlanBytes(N: number): number {
  * @param N size, a power of two, 16 .. 8192
  */
 export function writeTransformPlan(memory: ArrayBuffer, address: number, N: number): void {
-  const [rowTwiddles, columnTwiddles, rowOrder, columnOrder, workRow, workStrip] = planParts(N).map(
+  const [rowTwiddles, columnTwiddles, rowOrder, columnOrder, workRow, workRows] = planParts(N).map(
     (offset) => address + offset,
   );
   const floats = new Float32Array(memory);
@@ -49,7 +49,7 @@ export function writeTransformPlan(memory: ArrayBuffer, address: number, N: numb
     [p.planColumnTwiddles, columnTwiddles],
     [p.planColumnOrder, columnOrder],
     [p.planWorkRow, workRow],
-    [p.planWorkStrip, workStrip],
+    [p.planWorkRows, workRows],
   ];
   for (const [offset, value] of values) words[(address + offset) / 4] = value;
 }
@@ -126,7 +126,7 @@ function rowOrderTable(N: number): Uint32Array {
 }
 
 /**
- * For each block of four rows of the work strip, the byte in the strip where its first result's row begins.
+ * For each block of four work rows, the byte in the strip where its first result's row begins.
  * Uint32Array of N / 4.
  */
 function columnOrderTable(N: number): Uint32Array {

@@ -1,5 +1,5 @@
 import { butterfly4, butterfly8, type Complex, complexProduct, type Radix } from './butterflies.ts';
-import { COMPLEX_VECTOR, STRIP_ROW, STRIP_VECTORS } from './layout.ts';
+import { COMPLEX_VECTOR, LINE, LINE_VECTORS, STRIP_ROW, STRIP_VECTORS } from './layout.ts';
 import { type StraightLine, straightLine, type Term, term, ZERO_TERM } from './straight-line.ts';
 
 /*
@@ -8,15 +8,17 @@ import { type StraightLine, straightLine, type Term, term, ZERO_TERM } from './s
  * A transform of N = r 4 4 ... 4 (r = 4 or 8) values is a first stage of radix r, middle stages of radix 4 and a last
  * stage of radix 4, each a pass over the data (decimation in frequency). The last stage puts results in natural order.
  * A first stage has two forms: for any spectrum, and for one whose waves all lie below half the Nyquist index ("inner"),
- * whose middle half is zero and is neither read nor added.
+ * whose middle half is zero and is neither read nor added: 0.65 of the time, and what planned cascades have.
  *
  * Along a row, neighbouring values share a vector; the last stage turns 4 x 4 values in registers so that its
  * butterflies, too, run across vectors. Along a column, a vector holds one row's values of four columns and a twiddle
  * is the same for all of them.
  *
- * Stages take their strides as arguments, so one program serves every size. Measured on a Xeon with AVX-512, Node 20,
- * against one program a size with strides as constants: no faster (the butterflies keep the vector units busy, the
- * addresses come free), and twelve sizes make 250 kB to compile instead of 21.
+ * Contributor notes (Xeon with AVX-512, Node 20; figures of test/bench/fft-contenders.mjs in DEVELOPERS.md):
+ * - Stages take their strides as arguments, so one program of 20 kB serves every size. V8 turns a butterfly into 56
+ *   instructions, 34 of them the arithmetic itself; strides as constants, a program a size, have nothing left to save.
+ * - Radix 8 everywhere spills registers; it is used once, where log2 N is odd.
+ * - Register spills come from the twiddles of columns, which stay in the first cache: two vectors a row share a load.
  */
 
 type Butterfly = (out: StraightLine, x: readonly Complex<Term>[]) => Complex<Term>[];
@@ -30,15 +32,25 @@ const ZERO: Complex<Term> = { re: ZERO_TERM, im: ZERO_TERM };
 
 /** AssemblyScript text of all stages. */
 export function transformSource(): string {
-  const firsts = ([4, 8] as const).flatMap((radix) =>
-    [false, true].flatMap((inner) => [rowFirst(radix, inner), columnFirst(radix, inner)]),
-  );
-  return [...firsts, rowMiddle(), rowLast(), columnMiddle(), columnLast(), ''].join('\n\n');
+  const firsts = ([4, 8] as const).flatMap((radix) => [false, true].map((inner) => ({ radix, inner })));
+  const rows = [...firsts.map(({ radix, inner }) => rowFirst(radix, inner)), rowMiddle(), rowLast()];
+  const columns = ([1, 2] as const).flatMap((lines) => [
+    ...firsts.map(({ radix, inner }) => columnFirst(radix, inner, lines)),
+    columnMiddle(lines),
+    columnLast(lines),
+  ]);
+  return [...rows, ...columns, ''].join('\n\n');
 }
 
-/** Name of a first stage, e.g. `rowFirst4Inner`. */
-function firstName(pass: 'row' | 'column', radix: Radix, inner: boolean): string {
-  return `${pass}First${radix}${inner ? 'Inner' : ''}`;
+/** How many lines of a strip, of 8 columns each, a column pass takes at a time. */
+type Lines = 1 | 2;
+
+/** Names of first stages, e.g. `rowFirst4Inner`, and of column stages, e.g. `columnMiddle8` for 8 columns. */
+function rowFirstName(radix: Radix, inner: boolean): string {
+  return `rowFirst${radix}${inner ? 'Inner' : ''}`;
+}
+function columnName(stage: string, lines: Lines): string {
+  return `column${stage}By${8 * lines}`;
 }
 
 /**
@@ -55,7 +67,7 @@ function rowFirst(radix: Radix, inner: boolean): string {
     const turned = k === 0 ? y : complexProduct(y, vectorTwiddle(out, k), out);
     storeComplex(out, `work + ${2 * k} * apart`, 0, turned);
   });
-  return `export function ${firstName('row', radix, inner)}(re: usize, im: usize, work: usize, apart: usize, twiddles: usize): void {
+  return `export function ${rowFirstName(radix, inner)}(re: usize, im: usize, work: usize, apart: usize, twiddles: usize): void {
 ${constants(radix)}
 for (let end = work + 2 * apart; work < end; work += ${COMPLEX_VECTOR}) {
 ${out.take()}
@@ -116,35 +128,41 @@ strip += stripBytes;
 }`;
 }
 
-/** A column's first stage in the 16 columns of a strip, from the strip into the work strip. */
-function columnFirst(radix: Radix, inner: boolean): string {
+/**
+ * A column's first stage, from a strip into the work rows. `apart` is the distance of a butterfly's work rows, bytes.
+ */
+function columnFirst(radix: Radix, inner: boolean, lines: Lines): string {
+  const workRow = lines * LINE;
+  const from = (m: number) => `from + ${(m * STRIP_ROW) / workRow} * apart`;
   const body = (turned: boolean) => {
     const out = straightLine('t');
-    for (let v = 0; v < STRIP_VECTORS; v++) {
-      const x = inputs(radix, inner, (m) => loadComplex(out, `from + ${m} * apart`, v * COMPLEX_VECTOR));
+    for (let v = 0; v < lines * LINE_VECTORS; v++) {
+      const x = inputs(radix, inner, (m) => loadComplex(out, from(m), v * COMPLEX_VECTOR));
       BUTTERFLIES[radix](out, x).forEach((y, k) => {
         storeComplex(out, `to + ${k} * apart`, v * COMPLEX_VECTOR, turned ? turnedColumn(out, y, k) : y);
       });
     }
     return out.take();
   };
-  return `export function ${firstName('column', radix, inner)}(from: usize, to: usize, apart: usize, twiddles: usize): void {
+  const stage = `First${radix}${inner ? 'Inner' : ''}`;
+  return `export function ${columnName(stage, lines)}(from: usize, to: usize, apart: usize, twiddles: usize): void {
 ${constants(radix)}
 const end = to + apart;
 ${body(false)}
 twiddles += ${twiddleRow(radix)};
-for (from += ${STRIP_ROW}, to += ${STRIP_ROW}; to < end; from += ${STRIP_ROW}, to += ${STRIP_ROW}) {
+for (from += ${STRIP_ROW}, to += ${workRow}; to < end; from += ${STRIP_ROW}, to += ${workRow}) {
 ${columnTwiddles(radix)}
 ${body(true)}
 }
 }`;
 }
 
-/** A column's middle stage, in place, in one block of rows at `p` whose quarter is `apart` bytes. */
-function columnMiddle(): string {
+/** A column's middle stage, in place, in one block of work rows at `p` whose quarter is `apart` bytes. */
+function columnMiddle(lines: Lines): string {
+  const workRow = lines * LINE;
   const body = (turned: boolean) => {
     const out = straightLine('t');
-    for (let v = 0; v < STRIP_VECTORS; v++) {
+    for (let v = 0; v < lines * LINE_VECTORS; v++) {
       const x = inputs(4, false, (m) => loadComplex(out, `p + ${m} * apart`, v * COMPLEX_VECTOR));
       butterfly4(x, out).forEach((y, k) => {
         storeComplex(out, `p + ${k} * apart`, v * COMPLEX_VECTOR, turned ? turnedColumn(out, y, k) : y);
@@ -152,11 +170,11 @@ function columnMiddle(): string {
     }
     return out.take();
   };
-  return `export function columnMiddle(p: usize, apart: usize, twiddles: usize): void {
+  return `export function ${columnName('Middle', lines)}(p: usize, apart: usize, twiddles: usize): void {
 const end = p + apart;
 ${body(false)}
 twiddles += ${twiddleRow(4)};
-for (p += ${STRIP_ROW}; p < end; p += ${STRIP_ROW}) {
+for (p += ${workRow}; p < end; p += ${workRow}) {
 ${columnTwiddles(4)}
 ${body(true)}
 }
@@ -164,21 +182,23 @@ ${body(true)}
 }
 
 /**
- * A column's last stage, from blocks of four rows of the work strip into a strip of two real fields: in each row 16
- * real parts, then 16 imaginary parts. `order` lists, by block, the byte where its first result's row begins; the
- * others follow a quarter of the strip apart.
+ * A column's last stage, from blocks of four work rows into lines of two real fields: 8 real parts, then 8 imaginary
+ * parts. `order` lists, by block, the byte where its first result's row begins; the others follow a quarter of the strip
+ * (`apart`) further each.
  */
-function columnLast(): string {
+function columnLast(lines: Lines): string {
+  const workRow = lines * LINE;
   const out = straightLine('t');
-  for (let v = 0; v < STRIP_VECTORS; v++) {
-    const x = inputs(4, false, (m) => loadComplex(out, 'from', m * STRIP_ROW + v * COMPLEX_VECTOR));
+  for (let v = 0; v < lines * LINE_VECTORS; v++) {
+    const x = inputs(4, false, (m) => loadComplex(out, 'from', m * workRow + v * COMPLEX_VECTOR));
+    const offset = Math.floor(v / LINE_VECTORS) * LINE + (v % LINE_VECTORS) * (LINE / 4);
     butterfly4(x, out).forEach((y, k) => {
-      out.statement(`v128.store(to + ${k} * apart, ${out.text(y.re)}, ${16 * v});`);
-      out.statement(`v128.store(to + ${k} * apart, ${out.text(y.im)}, ${16 * v + STRIP_ROW / 2});`);
+      out.statement(`v128.store(to + ${k} * apart, ${out.text(y.re)}, ${offset});`);
+      out.statement(`v128.store(to + ${k} * apart, ${out.text(y.im)}, ${offset + LINE / 2});`);
     });
   }
-  return `export function columnLast(from: usize, end: usize, order: usize, strip: usize, apart: usize): void {
-for (; from < end; from += ${4 * STRIP_ROW}, order += 4) {
+  return `export function ${columnName('Last', lines)}(from: usize, end: usize, order: usize, strip: usize, apart: usize): void {
+for (; from < end; from += ${4 * workRow}, order += 4) {
 const to = strip + <usize>load<u32>(order);
 ${out.take()}
 }

@@ -1,3 +1,5 @@
+import { LINE } from './layout';
+
 /*
  * Values of a few rows of a map from strips of fields: taken as they are, or as normals and Jacobian of the displaced
  * surface. Rows come out one behind the other, N float32 values each, in the order of the file.
@@ -27,8 +29,8 @@ export function fieldRows(
     for (let row: usize = 0, from = field, to = out; row < rows; row++, from += step, to += columns << 2) {
       v128.store(to, f32x4.mul(s, v128.load(from)));
       v128.store(to, f32x4.mul(s, v128.load(from, 16)), 16);
-      v128.store(to, f32x4.mul(s, v128.load(from, 32)), 32);
-      v128.store(to, f32x4.mul(s, v128.load(from, 48)), 48);
+      v128.store(to, f32x4.mul(s, v128.load(from, LINE)), 32);
+      v128.store(to, f32x4.mul(s, v128.load(from, LINE + 16)), 48);
     }
   }
 }
@@ -64,9 +66,11 @@ export function jacobianRows(
     ) {
       let v: usize = 0;
       do {
-        const Dxx = v128.load(xx + offset + v);
-        const Dyy = v128.load(yy + offset + v);
-        const Dxy = f32x4.mul(unscale, v128.load(xy + offset + v));
+        // The second eight columns lie a line further.
+        const u = v + (v & 32);
+        const Dxx = v128.load(xx + offset + u);
+        const Dyy = v128.load(yy + offset + u);
+        const Dxy = f32x4.mul(unscale, v128.load(xy + offset + u));
         v128.store(to + v, jacobianExcess(Dxx, Dyy, Dxy));
         v += 16;
       } while (v < 64);
@@ -113,11 +117,13 @@ export function normalRows(
     ) {
       let v: usize = 0;
       do {
-        const Sx = v128.load(sx + offset + v);
-        const Sy = v128.load(sy + offset + v);
-        const Dxx = v128.load(xx + offset + v);
-        const Dyy = v128.load(yy + offset + v);
-        const Dxy = f32x4.mul(unscale, v128.load(xy + offset + v));
+        // The second eight columns lie a line further.
+        const u = v + (v & 32);
+        const Sx = v128.load(sx + offset + u);
+        const Sy = v128.load(sy + offset + u);
+        const Dxx = v128.load(xx + offset + u);
+        const Dyy = v128.load(yy + offset + u);
+        const Dxy = f32x4.mul(unscale, v128.load(xy + offset + u));
         const nx = f32x4.sub(f32x4.mul(Dxy, Sy), f32x4.mul(Sx, f32x4.add(one, Dyy)));
         const ny = f32x4.sub(f32x4.mul(Sx, Dxy), f32x4.mul(f32x4.add(one, Dxx), Sy));
         const nz = f32x4.add(one, jacobianExcess(Dxx, Dyy, Dxy));

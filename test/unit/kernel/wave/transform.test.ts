@@ -1,6 +1,12 @@
 import { expect, it } from 'vitest';
 import { float64Engine } from '../../../../src/field/float64-engine.ts';
-import { STRIP_COLUMNS, STRIP_ROW, stripBytes, stripsBytes } from '../../../../src/kernel/wave/layout.ts';
+import {
+  LINE,
+  STRIP_COLUMNS,
+  STRIP_ROW,
+  stripBytes,
+  stripsBytes,
+} from '../../../../src/kernel/wave/layout.ts';
 import { transformPlanBytes, writeTransformPlan } from '../../../../src/kernel/wave/transform-plan.ts';
 import { waveKernel } from '../../../../src/kernel/wave/wave-kernel.ts';
 import { describeKernel } from '../../../support/kernels.ts';
@@ -43,8 +49,10 @@ function transformOf(N: number): Transform {
     for (let y = 0, o = 0; y < N; y++) {
       for (let x = 0; x < N; x++, o += 2) {
         const strip = strips + Math.floor(x / STRIP_COLUMNS) * stripBytes(N) + y * STRIP_ROW;
-        out[o] = floats[strip / 4 + (x % STRIP_COLUMNS)];
-        out[o + 1] = floats[strip / 4 + STRIP_COLUMNS + (x % STRIP_COLUMNS)];
+        // A line holds 8 real parts, then 8 imaginary parts.
+        const line = (strip + LINE * Math.floor((x % STRIP_COLUMNS) / 8)) / 4;
+        out[o] = floats[line + (x % 8)];
+        out[o + 1] = floats[line + 8 + (x % 8)];
       }
     }
     return out;
