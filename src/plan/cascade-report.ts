@@ -34,6 +34,10 @@ export function cascadeReports(
       wavesAcross: c === 0 ? patch / seaPeakWavelength(tables) : patch / longestWavelengthM,
       vertexSpacingM: shortestWavelengthM / 4,
       effectiveWaves: effectiveWaves(tallies[c]),
+      cellSumError: cellSumError(
+        tallies[c],
+        seaIntegral(tables, (k) => bandWeight(k, layout.band)),
+      ),
       repetition: c === 0 ? null : repetition(layouts, c, tables),
     };
   });
@@ -66,6 +70,12 @@ function repetition(layouts: readonly CascadeLayout[], c: number, tables: readon
     seaIntegral(tables, (k) => (k > kLimit ? 0 : weight(k) * reportedSlope(k)));
   const all = slope((k) => layouts.reduce((sum, { band }) => sum + bandWeight(k, band), 0));
   return all === 0 ? 0 : slope((k) => bandWeight(k, layouts[c].band)) / all;
+}
+
+/** Relative error of the sum of all cells against the one-dimensional integral of the band, m^2. */
+function cellSumError(tallies: readonly LatticeTally[], bandVariance: number): number {
+  if (bandVariance === 0) return 0;
+  return tallies.reduce((sum, { variance, zeroCell }) => sum + variance + zeroCell, 0) / bandVariance - 1;
 }
 
 function effectiveWaves(tallies: readonly LatticeTally[]): number {

@@ -177,6 +177,8 @@ export interface CascadeReport {
   /** Mesh spacing that resolves the shortest wave with four vertices, m. */
   readonly vertexSpacingM: number;
   readonly effectiveWaves: number;
+  /** Sum of the cells, k = 0 included, against the integral of the band, relative: what the quadrature missed. */
+  readonly cellSumError: number;
   /**
    * Share of what is seen at the size of the tile's large features that repeats with the tile; null for c0, which
    * repeats every patch length as a whole.

@@ -10,6 +10,8 @@ const FREQUENCY_SHIFT = 0.05;
 const DIRECTION_SHIFT_RAD = (5 * Math.PI) / 180;
 const FEWEST_WAVES = 8;
 const ZERO_CELL_SHARE = 0.005;
+/** What the quadrature of the cells may miss of a band. */
+const CELL_SUM_ERROR = 0.005;
 /** Repetition of a finer cascade above which its tiling is seen. */
 const SEEN_REPETITION = 0.2;
 const FREQUENCY_ERROR = 0.1;
@@ -89,6 +91,13 @@ function latticeWarnings({ report }: Omit<Plan, 'hash'>): string[] {
     warnings.push(
       `The same ${first.effectiveWaves.toFixed(0)} waves carry the long tile: its crests are recognised when they return; keep less than two tiles in view.`,
     );
+  }
+  for (const { id, cellSumError } of report.cascades) {
+    if (Math.abs(cellSumError) > CELL_SUM_ERROR) {
+      warnings.push(
+        `${id}: its waves hold ${percent(Math.abs(cellSumError), 1)} ${cellSumError > 0 ? 'more' : 'less'} than the band they stand for: the sea is too narrow for this tile; lengthen the patch.`,
+      );
+    }
   }
   for (const cascade of finer) {
     if ((cascade.repetition ?? 0) > SEEN_REPETITION) {

@@ -79,3 +79,12 @@ describe('losses', () => {
     );
   });
 });
+
+describe('the sum of the cells', () => {
+  const cellSum = (band: Record<string, number>): number =>
+    reportOf(tinySea({ cascades: [{ patch: 30, resolution: 64, band }] })).cascades[0].cellSumError;
+
+  it('is the integral of the band where the cells resolve it', () => {
+    expect(Math.abs(cellSum({}))).toBeLessThan(1e-3);
+  });
+});
