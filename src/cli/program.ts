@@ -23,7 +23,7 @@ const COMMANDS: readonly CommandEntry[] = [
   },
   {
     name: 'gather',
-    summary: 'join the shards of a bake: check them, make foam and the manifest',
+    summary: 'Join the shards of a bake: check them, make foam and the manifest.',
     usage: '[options] <folder>',
     load: async () => (await import('./gather-command.ts')).defineGatherCommand,
   },
