@@ -64,7 +64,7 @@ function foamInspection(facts: CascadeFacts, foam: ManifestFoam, residue: string
       const surface = facts.surface(frame);
       if (field === null || before === undefined || surface === null) return;
       const J = jacobianOf(surface);
-      correlation.add(field.values, J.values);
+      correlation.add(newFoam(field, before, law), J.values);
       const predicted = new Float64Array(field.values.length);
       for (let i = 0; i < predicted.length; i++) {
         predicted[i] = Math.max(law.fresh(J.values[i]), law.faded(before[i]));
@@ -89,7 +89,7 @@ function foamInspection(facts: CascadeFacts, foam: ManifestFoam, residue: string
       const made = source.frames() === 0 ? noSurface : source.verdict();
       rows.push(answering('Is it made where the surface is compressed, and nowhere else?', made));
       const together = source.frames() === 0 ? noSurface : correlation.verdict();
-      rows.push(answering('Is there more of it the more the surface is compressed?', together));
+      rows.push(answering('Does the more of it appear the more the surface is compressed?', together));
       return rows;
     },
   };
@@ -178,6 +178,15 @@ function foamError(
   });
 }
 
+/** What foam rises by from one frame to the next, beyond what rounding can feign: where waves break just then. */
+function newFoam(field: FieldValues, before: Float32Array, law: FoamLaw): Float64Array {
+  return Float64Array.from(field.values, (value, i) => {
+    const rise = value - law.faded(before[i]);
+    const feigned = roundingBound(field.rounding, value) + roundingBound(field.rounding, before[i]);
+    return rise > feigned ? rise : 0;
+  });
+}
+
 interface CorrelationSums {
   readonly add: (a: Float64Array, b: Float64Array) => void;
   readonly verdict: () => Verdict;
@@ -198,9 +207,10 @@ function correlationSums(): CorrelationSums {
     },
     verdict() {
       const spread = (aa / n - (a1 / n) ** 2) * (bb / n - (b1 / n) ** 2);
-      if (!(spread > 0)) return notApplicable('there is no foam in the frames looked at');
+      if (!(spread > 0)) return notApplicable('no foam rises in the frames looked at');
       const correlation = (ab / n - (a1 / n) * (b1 / n)) / Math.sqrt(spread);
-      const reason = 'correlation of foam and Jacobian, which is low where the surface is compressed';
+      const reason =
+        'correlation of new foam and the Jacobian, which is low where the surface is compressed; old foam drifts off its breaker';
       return verdict(correlation, { limit: 0, unit: 'correlation', reason });
     },
   };
