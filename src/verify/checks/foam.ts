@@ -89,7 +89,7 @@ function foamInspection(facts: CascadeFacts, foam: ManifestFoam, residue: string
       const made = source.frames() === 0 ? noSurface : source.verdict();
       rows.push(answering('Is it made where the surface is compressed, and nowhere else?', made));
       const together = source.frames() === 0 ? noSurface : correlation.verdict();
-      rows.push(answering('Does the more of it appear the more the surface is compressed?', together));
+      rows.push(answering('Does it rise where the surface is compressed?', together));
       return rows;
     },
   };
@@ -210,7 +210,7 @@ function correlationSums(): CorrelationSums {
       if (!(spread > 0)) return notApplicable('no foam rises in the frames looked at');
       const correlation = (ab / n - (a1 / n) * (b1 / n)) / Math.sqrt(spread);
       const reason =
-        'correlation of new foam and the Jacobian, which is low where the surface is compressed; old foam drifts off its breaker';
+        'correlation of new foam and the Jacobian, which is low where the surface is compressed; foam that stays says nothing, as waves run on under it';
       return verdict(correlation, { limit: 0, unit: 'correlation', reason });
     },
   };
