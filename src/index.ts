@@ -82,6 +82,7 @@ export {
 export { isPlanText, parsePlan, planText } from './plan/plan-text.ts';
 export { CONTACT_SHEET_DEFAULTS, type ContactSheetOptions, contactSheet } from './report/contact-sheet.ts';
 export { verifyReportLines } from './report/verify-text.ts';
+export type { DataFile, FileReader } from './sea/data-file.ts';
 export {
   CASCADES_DEFAULTS,
   FOAM_DEFAULTS,
@@ -112,11 +113,14 @@ export type {
   CascadesRequest,
   FoamRequest,
   FrameRate,
+  GrowthName,
   ListedCascade,
   ListedCascades,
   Loop,
   MapName,
   MapRequest,
+  MeasuredRequest,
+  MeasuredSpectrum,
   OutputConventions,
   RangePolicy,
   Sea,
@@ -129,6 +133,7 @@ export type {
   WaveSystemRequest,
   WindGrowth,
   WindSeaRequest,
+  WindWords,
 } from './sea/sea.ts';
 export type { SpectrumParameters, SpreadingParameters } from './spectrum/registry.ts';
 export { writeFileAtomic } from './store/atomic-file.ts';

@@ -31,13 +31,13 @@ export function plannedInput(
   pathOrPreset: string,
   engine: EngineName | undefined,
 ): PlannedInput {
-  const { name, source, text } = seaText(pathOrPreset);
+  const { name, source, text, readFile } = seaText(pathOrPreset);
   const isWatched = isTerminal(io.stderr, io.env);
   if (isWatched) io.stderr.write(`planning ${name} ...`);
   try {
     const planned = isPlanText(text)
       ? plannedBakeOf(planWithEngine(parsePlan(text, source), engine, source), source)
-      : planBake(parseSea(text, { source }), { engine: engine ?? PLAN_DEFAULTS.engine });
+      : planBake(parseSea(text, { source, readFile }), { engine: engine ?? PLAN_DEFAULTS.engine });
     return { name, planned };
   } finally {
     if (isWatched) io.stderr.write(CLEARED_LINE);

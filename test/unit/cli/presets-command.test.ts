@@ -1,5 +1,12 @@
 import { describe, expect, it } from 'vitest';
-import { EXIT_STATUS, parseSea, presetNames, presetSummaries, presetText } from '../../../src/index.ts';
+import {
+  EXIT_STATUS,
+  parseSea,
+  presetNames,
+  presetSummaries,
+  presetText,
+  seaText,
+} from '../../../src/index.ts';
 import { outcomeOf } from './captured-io.ts';
 
 describe('presets', () => {
@@ -17,7 +24,7 @@ describe('presets', () => {
     const { status, stdout } = await outcomeOf(['presets', name]);
     expect(status).toBe(EXIT_STATUS.done);
     expect(stdout).toBe(presetText(name));
-    expect(() => parseSea(stdout)).not.toThrow();
+    expect(() => parseSea(stdout, { readFile: seaText(name).readFile })).not.toThrow();
   });
 
   it('suggests the nearest name', async () => {
