@@ -70,13 +70,13 @@ export interface SeaStatistics {
     readonly acrossWind: number;
     /** Of waves from 0.1 m up that no cascade holds, by the manifest: roughness for the shader. */
     readonly leftOut: number;
-    /** Cox & Munk 1954 for the strongest wind; null without wind. It counts ripples that no cascade holds. */
+    /** Cox & Munk 1954 for the strongest wind, ripples included; null outside the winds that they saw. */
     readonly clean: SlopeVariance | null;
   } | null;
   /** Share of keyed random positions where J of the sum of the strains is below 0. */
   readonly foldedShare: number | null;
   readonly foamCoverage: number | null;
-  /** Monahan & O'Muircheartaigh 1980 for the strongest wind; null without wind. */
+  /** Monahan & O'Muircheartaigh 1980 for the strongest wind; null without one or where the law is not used. */
   readonly whitecapCoverage: number | null;
 }
 
@@ -144,6 +144,20 @@ function windDirection({ manifest: { sea } }: BakeFacts): number {
 function strongestWind({ manifest: { sea } }: BakeFacts): number | null {
   const winds = sea.systems.flatMap(({ windSpeedMps }) => windSpeedMps ?? []);
   return winds.length === 0 ? null : Math.max(...winds);
+}
+
+function isWithin(wind: number | null, least: number, most: number): wind is number {
+  return wind !== null && wind >= least && wind <= most;
+}
+
+/** Winds at 12.5 m of the photographs, m/s. Source: Cox & Munk 1954. */
+const SLOPE_WINDS_MPS = [1, 14] as const;
+const ANY_WIND_MPS = 80;
+
+function cleanSlopeVariance(wind: number | null): SlopeVariance | null {
+  if (!isWithin(wind, 0, ANY_WIND_MPS)) return null;
+  const W = windSpeedAtHeight(wind, 12.5);
+  return isWithin(W, ...SLOPE_WINDS_MPS) ? coxMunkSlopeVariance(W) : null;
 }
 
 function cascadeStatistics({
@@ -229,14 +243,14 @@ function seaStatistics(bake: BakeFacts, measures: readonly CascadeMeasures[]): S
           alongWind: moments.reduce((sum, one) => sum + one.alongWind, 0),
           acrossWind: moments.reduce((sum, one) => sum + one.acrossWind, 0),
           leftOut: bake.manifest.losses.slopeVarianceLeftOut,
-          clean: wind === null ? null : coxMunkSlopeVariance(windSpeedAtHeight(wind, 12.5)),
+          clean: cleanSlopeVariance(wind),
         }
       : null,
     foldedShare: foldedShareOfSum(measures.map(({ folds }) => folds)),
     foamCoverage: foams.some((coverage) => coverage !== null)
       ? 1 - foams.reduce<number>((clear, coverage) => clear * (1 - (coverage ?? 0)), 1)
       : null,
-    whitecapCoverage: wind === null || wind > STRONGEST_WHITECAP_WIND_MPS ? null : whitecapCoverage(wind),
+    whitecapCoverage: isWithin(wind, 0, STRONGEST_WHITECAP_WIND_MPS) ? whitecapCoverage(wind) : null,
   };
 }
 

@@ -148,6 +148,13 @@ describe('a manifest that lies about its files fails', () => {
     expect(await failuresOf(folder)).toEqual(expect.arrayContaining(['waves', 'spectrum', 'spot']));
   });
 
+  it.each([1e308, -5])('a wind of %s m/s, which no wave follows from', async (windSpeedMps) => {
+    const folder = changedBake(({ sea }) => Object.assign(sea.systems[0], { windSpeedMps }));
+    const { statistics } = await verifyBake(folder);
+    expect(statistics?.sea.whitecapCoverage).toBeNull();
+    expect(statistics?.sea.slopeVariance?.clean).toBeNull();
+  });
+
   it('a sea without bounds', async () => {
     const folder = changedBake(({ sea }) => Object.assign(sea.systems[0].spectrum, { energyFactor: 1e300 }));
     expect(await failuresOf(folder)).toEqual(['waves', 'spectrum', 'spot']);
