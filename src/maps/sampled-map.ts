@@ -8,6 +8,7 @@ import type {
   SamplesTarget,
 } from '../field/float32-requests.ts';
 import { blankPlane, type ChannelSpec, LARGEST_CODE, type Quantity } from '../image/image.ts';
+import type { JacobianCodes } from '../plan/plan.ts';
 import { type ChannelStatistics, type EncodedMap, type MapStorage, UNITS_PER_SI } from './encoded-map.ts';
 
 /*
@@ -38,17 +39,19 @@ const SAMPLED_VALUES: Readonly<Partial<Record<Quantity, SampledValue>>> = {
  * Maps of the frame that a synthesis was turned to, as planar images, made in one pass.
  *
  * @param storages how each map is stored
+ * @param also further samples to make in the same pass, e.g. `jacobianCodesRequest`
  * @throws InternalError where a value is not finite or too large for its samples, naming the texel
  */
 export function sampledMaps(
   synthesis: Float32Synthesis,
   storages: readonly MapStorage[],
+  also: readonly SamplesRequest[] = [],
 ): readonly EncodedMap[] {
   const planes = storages.map(({ resolution: N, sample, channels }) =>
     channels.map(() => blankPlane(sample, N * N)),
   );
   const requests = storages.map((storage, m) => samplesRequest(storage, { planes: planes[m] }));
-  const statistics = synthesis.samples(requests);
+  const statistics = synthesis.samples([...requests, ...also]);
   return storages.map((storage, m) => {
     const { resolution: N, sample, channels } = storage;
     const image = { width: N, height: N, sample, channels, planes: planes[m] };
@@ -69,6 +72,16 @@ export function largestMagnitudes(
   const bad = largest.findIndex((value) => !Number.isFinite(value));
   if (bad >= 0) throw new InternalError(`${quantities[bad]} is not a number somewhere on the tile`);
   return largest;
+}
+
+/**
+ * J as 16-bit codes for foam: code = (J - zeroJ) / stepJ, clamped.
+ *
+ * @param out Uint16Array N*N, filled in field order
+ */
+export function jacobianCodesRequest(out: Uint16Array, { zeroJ, stepJ }: JacobianCodes): SamplesRequest {
+  const channel = { value: 'jacobian', gain: 1 / stepJ, shift: -zeroJ / stepJ, dither: null } as const;
+  return { sample: 'uint16', channels: [channel], rowZero: 'south', target: { planes: [out] } };
 }
 
 /** What the kernel has to do for a map. */

@@ -17,8 +17,7 @@ import { type StraightLine, straightLine, type Term, term, ZERO_TERM } from './s
  * Contributor notes (Xeon with AVX-512, Node 20; figures of test/bench/fft-contenders.mjs in DEVELOPERS.md):
  * - Stages take their strides as arguments, so one program of 20 kB serves every size. V8 turns a butterfly into 56
  *   instructions, 34 of them the arithmetic itself; strides as constants, a program a size, have nothing left to save.
- * - Radix 8 everywhere spills registers; it is used once, where log2 N is odd.
- * - Register spills come from the twiddles of columns, which stay in the first cache: two vectors a row share a load.
+ * - Radix 8 has more live values than the 16 registers; it is used once, where log2 N is odd.
  */
 
 type Butterfly = (out: StraightLine, x: readonly Complex<Term>[]) => Complex<Term>[];

@@ -95,7 +95,7 @@ export interface WaveProgram {
 }
 
 /**
- * A kernel with a memory of its own, private to its thread: copying out of shared WebAssembly memory was measured 14
+ * A kernel with a memory of its own, private to its thread: copying out of shared WebAssembly memory was measured 3 to 14
  * times slower.
  *
  * The memory has two parts. What is kept stays for good and grows upward. What is lent lies behind it and serves one

@@ -6,7 +6,7 @@ import { synthesis } from '../../../src/field/synthesis.ts';
 import type { ChannelSpec, Quantity, SampleType, Unit } from '../../../src/image/image.ts';
 import { ditherPattern, encodedMap, type MapStorage } from '../../../src/maps/encoded-map.ts';
 import { FRAME_MAPS, type FrameMapName } from '../../../src/maps/quantity-values.ts';
-import { sampledMaps } from '../../../src/maps/sampled-map.ts';
+import { jacobianCodesRequest, sampledMaps } from '../../../src/maps/sampled-map.ts';
 import { halfStep, numberFromHalf } from '../../../src/math/half.ts';
 import { centredDecode, jacobianDecode } from '../../../src/plan/encodings.ts';
 import { describeKernel } from '../../support/kernels.ts';
@@ -175,6 +175,22 @@ describeKernel('wave', 'maps made by the kernel', () => {
         expect(Buffer.from(plane.buffer).equals(Buffer.from(alone.image.planes[c].buffer))).toBe(true);
       });
     });
+  });
+
+  it('give foam its codes of J in the same pass', () => {
+    const N = 64;
+    const { surface, reference } = bothEngines(N, 8);
+    const storage = storageOf('jacobian', N, 'float', { rowZero: 'south' });
+    const J = reference('jacobian', storage).image.planes[0];
+    const codes = new Uint16Array(N * N);
+    const rule = { zeroJ: 0.93, stepJ: 2e-6 };
+    sampledMaps(surface, [storageOf('height', N, 'half')], [jacobianCodesRequest(codes, rule)]);
+    let worst = 0;
+    for (let i = 0; i < codes.length; i++) {
+      const code = Math.min(65535, Math.max(0, Math.round((J[i] - rule.zeroJ) / rule.stepJ)));
+      worst = Math.max(worst, Math.abs(codes[i] - code));
+    }
+    expect(worst).toBeLessThanOrEqual(1);
   });
 
   it('can be dithered and in centimetres', () => {

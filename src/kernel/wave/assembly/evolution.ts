@@ -6,8 +6,10 @@
  * Only the half plane ny >= 0 is made: h(-k) = conj h(k). Phases come from a table of (cos, sin), one entry a number of
  * turns, filled for the frame; `turns` holds, by wave, the byte offset of its entry.
  *
- * Measured per wave on 1024 x 1024, one core: plain JavaScript over float64 14 ns, this 1.1 ns (still water) and 1.9 ns
- * (current). A sine and cosine by polynomial instead of the table needs m n mod N in float32, which loses the phase.
+ * Contributor notes (Xeon, Node 20; 1024 x 1024 with waves to half the Nyquist index): 1.1 ns a wave on still water,
+ * 1.5 ns with a current, 0.1 ms a frame; the float64 engine, which turns every cell of the lattice, 85 ms. That is 1 to
+ * 2 % of a frame's transforms, so nothing is to be gained from doing it inside the row pass. A sine and cosine by
+ * polynomial instead of the table would need m n mod N, a whole number, in float32, which loses the phase.
  */
 
 /**

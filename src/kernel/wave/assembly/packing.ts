@@ -2,7 +2,7 @@
  * Codes put as a PNG wants them: samples of a texel side by side, 16-bit samples with the high byte first.
  *
  * Each output vector is three swizzles and two ors, with index 255 for a byte that comes from another channel. Two-sided
- * shuffles say the same with fewer words and take twice as long: V8 builds their masks anew for every use.
+ * shuffles say the same with fewer words and take four times as long: V8 builds their masks anew for every use.
  */
 
 /** Bytes of 8-bit samples from codes of two bytes; `count` is a multiple of 16. */

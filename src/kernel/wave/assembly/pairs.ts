@@ -8,8 +8,8 @@
  *
  * Rows are made in two planes (real, imaginary) in the first cache, where the first stage of the transform reads them.
  *
- * One pair is made at a time from h in memory. Tried: all four pairs of a row at once, h never leaving the first cache.
- * It touches four times as many memory pages a row (a row is scattered over all strips) and loses beyond 512.
+ * One pair is made at a time from h in memory: a row is scattered over all strips, one memory page each, and all pairs
+ * of a row at once would touch as many pages for each of them. Making the rows costs 6 % of their transform at 256.
  */
 import {
   ROW_PLANE,
