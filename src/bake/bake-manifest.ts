@@ -16,6 +16,7 @@ import type { Loop, MapName } from '../sea/sea.ts';
 import { CAUTION } from '../version.ts';
 import { bandLimits } from '../waves/band.ts';
 import { nyquistWavenumber, wavenumberStep } from '../waves/lattice.ts';
+import { cascadeStatistics, seaStatistics, writtenHeights } from './bake-statistics.ts';
 import { breakingJ, type FoamLevel } from './foam-level.ts';
 import type { FrameEntry } from './journal-entry.ts';
 import { isCodesPath } from './paths.ts';
@@ -40,10 +41,6 @@ export function bakeManifest(
     requireWhole(cascade, own);
     return manifestCascade(plan, cascade, own, levels[c]);
   });
-  const variances = cascades.map(measuredVariance);
-  const measured = variances.every((variance) => variance !== null)
-    ? 4 * Math.sqrt(variances.reduce((sum, variance) => sum + variance, 0))
-    : null;
   const { report } = plan;
   const names = new Set(plan.cascades.flatMap(({ maps }) => maps.map(({ map }) => map)));
   return {
@@ -67,13 +64,11 @@ export function bakeManifest(
     reading: readingGuide(plan.output, names),
     loop: manifestLoop(plan.loop),
     cascades,
-    statistics: {
-      significantHeightM: {
-        target: report.sea.significantHeightM,
-        expected: report.sea.expectedHeightM,
-        measured,
-      },
-    },
+    statistics: seaStatistics(
+      plan,
+      cascades,
+      plan.cascades.map((_, c) => writtenHeights(entries.filter((entry) => entry.cascade === c))),
+    ),
     losses: {
       notInAnyCascade: report.losses.notInAnyCascade,
       zeroCells: report.losses.zeroCells,
@@ -150,7 +145,6 @@ function manifestCascade(
   const maps: Partial<Record<MapName, ManifestMap>> = {};
   for (const planned of cascade.maps) maps[planned.map] = manifestMap(cascade, planned, entries);
   const { kMinRadPerM, kMaxRadPerM } = bandLimits(cascade.band);
-  const variance = measuredVariance({ maps });
   return {
     id: cascade.id,
     patchLengthM: cascade.patchLengthM,
@@ -162,14 +156,7 @@ function manifestCascade(
     band: cascade.band,
     loop: manifestLoop({ ...cascade.loop, firstFrame: plan.loop.firstFrame }),
     amplitudesHash: cascade.amplitudesHash,
-    statistics: {
-      significantHeightM: {
-        expected: 4 * cascade.expectedHeightDeviationM,
-        measured: variance === null ? null : 4 * Math.sqrt(variance),
-      },
-      slopeVariance: cascade.deviations.slopeEast ** 2 + cascade.deviations.slopeNorth ** 2,
-      compression: cascade.deviations.compression,
-    },
+    statistics: cascadeStatistics(plan, cascade, entries, maps),
     foam: level === null ? null : manifestFoam(cascade, level, maps.foam),
     maps,
   };
@@ -238,14 +225,4 @@ function writtenFigures(frames: readonly ChannelStatistics[], texels: number): M
   }
   const mean = sum / texels;
   return { min, max, mean, deviation: Math.sqrt(Math.max(0, sumOfSquares / texels - mean * mean)), clipped };
-}
-
-/** Variance of the height as written, m^2, from whichever map holds it; null where none does. */
-function measuredVariance({ maps }: Pick<ManifestCascade, 'maps'>): number | null {
-  const channel = [maps.displacement, maps.height]
-    .flatMap((map) => map?.channels ?? [])
-    .find(({ quantity }) => quantity === 'displacement-up' || quantity === 'height');
-  if (channel === undefined) return null;
-  const metres = channel.unit === 'cm' ? 0.01 : 1;
-  return (channel.written.deviation * metres) ** 2;
 }

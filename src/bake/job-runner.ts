@@ -1,5 +1,7 @@
 import { sha256 } from '../hash.ts';
 import type { ChannelStatistics } from '../maps/encoded-map.ts';
+import { heightSums } from '../maps/height-sums.ts';
+import type { PowerSums } from '../math/statistics.ts';
 import { isSurveyed } from '../plan/encodings.ts';
 import type { CascadeFoam, Plan, PlannedCascade } from '../plan/plan.ts';
 import type { MapName } from '../sea/sea.ts';
@@ -83,10 +85,13 @@ function frameResult(job: FrameJob, context: JobContext, maker: CascadeMaker): F
   const files: WrittenFile[] = [];
   const statistics: Partial<Record<MapName, readonly ChannelStatistics[]>> = {};
   const timer = stageTimer();
+  let heights: PowerSums | null = null;
+  let foldedTexels: number | null = null;
   maker.turnTo(job.frame);
   timer.lap('synthesis');
   for (const { planned, image, statistics: figures } of maker.maps()) {
     statistics[planned.map] = figures;
+    heights ??= heightSums(image);
     timer.lap('maps');
     const { path, bytes } = encodedFile(plan, cascade, planned, image, job.frame);
     timer.lap('encode');
@@ -95,12 +100,32 @@ function frameResult(job: FrameJob, context: JobContext, maker: CascadeMaker): F
   }
   if (cascade.foam !== null) {
     const codes = maker.jacobianCodes();
+    foldedTexels = foldedCodes(codes, cascade.foam);
     timer.lap('maps');
     const bytes = new Uint8Array(codes.buffer, codes.byteOffset, codes.byteLength);
     files.push(written(context, codesPath(cascade.id, job.frame), bytes));
     timer.lap('write');
   }
-  return { kind: 'frame', cascade: job.cascade, frame: job.frame, files, statistics, seconds: timer.seconds };
+  const { cascade: c, frame } = job;
+  return {
+    kind: 'frame',
+    cascade: c,
+    frame,
+    files,
+    statistics,
+    heights,
+    foldedTexels,
+    seconds: timer.seconds,
+  };
+}
+
+/** Texels that are folded over, J < 0; null where the codes end above 0 and some are at their end. */
+function foldedCodes(codes: Uint16Array, { jacobianCodes: { zeroJ, stepJ } }: CascadeFoam): number | null {
+  const codeOfZero = -zeroJ / stepJ;
+  if (codeOfZero <= 0) return codes.includes(0) ? null : 0;
+  let folded = 0;
+  for (const code of codes) if (code < codeOfZero) folded++;
+  return folded;
 }
 
 function surveyResult(job: SurveyJob, cascade: PlannedCascade, maker: CascadeMaker): JobResult {
@@ -133,7 +158,16 @@ function* foamResults(job: FoamJob, context: JobContext, read: CodeReader): Gene
     const files = [written(context, path, bytes)];
     timer.lap('write');
     const { seconds } = timer;
-    yield { kind: 'foam', cascade: job.cascade, frame, files, statistics: { foam: statistics }, seconds };
+    yield {
+      kind: 'foam',
+      cascade: job.cascade,
+      frame,
+      files,
+      statistics: { foam: statistics },
+      heights: null,
+      foldedTexels: null,
+      seconds,
+    };
     timer = stageTimer();
   }
 }

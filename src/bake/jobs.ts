@@ -1,4 +1,5 @@
 import type { ChannelStatistics } from '../maps/encoded-map.ts';
+import type { PowerSums } from '../math/statistics.ts';
 import type { MapName } from '../sea/sea.ts';
 
 /** A piece of work that one thread does on its own. Plain and cloneable, as are the results. */
@@ -61,6 +62,10 @@ export interface FrameResult extends FrameId {
   readonly files: readonly WrittenFile[];
   /** What was written, by map, in channel order. */
   readonly statistics: Readonly<Partial<Record<MapName, readonly ChannelStatistics[]>>>;
+  /** Of the heights as written; null where the frame holds none. */
+  readonly heights: PowerSums | null;
+  /** Texels whose J code is below that of J = 0; null where there are no codes or they do not reach so low. */
+  readonly foldedTexels: number | null;
   /** Seconds by stage; for `run.json` only. */
   readonly seconds: StageSeconds;
 }

@@ -1,4 +1,5 @@
 import type { ChannelStatistics } from '../maps/encoded-map.ts';
+import type { PowerSums } from '../math/statistics.ts';
 import type { Plan } from '../plan/plan.ts';
 import { MAP_NAMES, type MapName } from '../sea/sea.ts';
 import type { FrameResult, WrittenFile } from './jobs.ts';
@@ -89,7 +90,9 @@ function isFrameEntry(value: Readonly<Record<string, unknown>>): boolean {
     isRecord(value.statistics) &&
     Object.entries(value.statistics).every(
       ([map, list]) => MAP_NAMES.includes(map as MapName) && Array.isArray(list) && list.every(isStatistics),
-    )
+    ) &&
+    (value.heights === null || isPowerSums(value.heights)) &&
+    (value.foldedTexels === null || isCount(value.foldedTexels))
   );
 }
 
@@ -101,6 +104,15 @@ function isStatistics(value: unknown): value is ChannelStatistics {
   return (
     isRecord(value) &&
     ['sum', 'sumOfSquares', 'min', 'max', 'clipped'].every((key) => Number.isFinite(value[key]))
+  );
+}
+
+function isPowerSums(value: unknown): value is PowerSums {
+  return (
+    isRecord(value) &&
+    ['count', 'sum', 'squares', 'cubes', 'fourths', 'minimum', 'maximum'].every((key) =>
+      Number.isFinite(value[key]),
+    )
   );
 }
 

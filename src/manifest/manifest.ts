@@ -25,7 +25,7 @@ export interface Manifest {
   readonly reading: Readonly<Record<string, string>>;
   readonly loop: ManifestLoop;
   readonly cascades: readonly ManifestCascade[];
-  readonly statistics: { readonly significantHeightM: HeightFigures };
+  readonly statistics: ManifestSeaStatistics;
   readonly losses: ManifestLosses;
   readonly files: readonly ManifestFile[];
 }
@@ -88,6 +88,47 @@ export interface HeightFigures {
   readonly measured: number | null;
 }
 
+/** Of the sum of the cascades; figures of what was written are null where no map holds it. */
+export interface ManifestSeaStatistics {
+  readonly significantHeightM: HeightFigures;
+  /** Of the sea that was asked for. */
+  readonly peakPeriodS: number;
+  readonly meanZeroCrossingPeriodS: number;
+  /** As written, from the cumulants of the cascades, which are independent. A Gaussian sea has 0 and 3. */
+  readonly skewness: number | null;
+  readonly kurtosis: number | null;
+  /** No crest of the sum is higher, no trough deeper: the sums of the cascades' own, m. */
+  readonly largestCrestBoundM: number | null;
+  readonly deepestTroughBoundM: number | null;
+  /** Slope variance the cascades hold together, and Cox & Munk 1954 for the strongest wind, which counts all ripples. */
+  readonly slopeVariance: SlopeFigures & { readonly coxMunk: SlopeFigures | null };
+  /** Mean of the written foam, screened together, and the whitecap formula for the strongest wind. */
+  readonly foamCoverage: { readonly measured: number | null; readonly whitecapFormula: number | null };
+}
+
+/** Along and across the strongest wind, or where there is none the direction of the highest system. */
+export interface SlopeFigures {
+  readonly alongWind: number;
+  readonly acrossWind: number;
+}
+
+export interface ManifestCascadeStatistics {
+  readonly significantHeightM: Omit<HeightFigures, 'target'>;
+  /** Of the heights as written; every second texel each way from 128 on. */
+  readonly skewness: number | null;
+  readonly kurtosis: number | null;
+  readonly largestCrestM: number | null;
+  readonly deepestTroughM: number | null;
+  /** Slope variance of the waves this cascade holds, exact from its wave amplitudes. */
+  readonly slopeVariance: SlopeFigures;
+  /** Standard deviation of J - 1 to first order. */
+  readonly jacobianDeviation: number;
+  /** Share of the surface that is folded over, J < 0; null where no J was made. */
+  readonly foldedShare: number | null;
+  /** One step of the height's codes, or the distance of halves at the largest height, mm; null for float32 files. */
+  readonly heightStepMm: number | null;
+}
+
 export interface ManifestCascade {
   readonly id: string;
   readonly patchLengthM: number;
@@ -100,13 +141,7 @@ export interface ManifestCascade {
   };
   readonly loop: ManifestLoop;
   readonly amplitudesHash: string;
-  readonly statistics: {
-    readonly significantHeightM: Omit<HeightFigures, 'target'>;
-    /** Slope variance, both axes together, of the waves this cascade holds. */
-    readonly slopeVariance: number;
-    /** Standard deviation of J - 1 to first order. */
-    readonly compression: number;
-  };
+  readonly statistics: ManifestCascadeStatistics;
   readonly foam: ManifestFoam | null;
   readonly maps: Readonly<Partial<Record<MapName, ManifestMap>>>;
 }

@@ -120,6 +120,11 @@ const map = z.strictObject({
   channels: z.array(channel).readonly(),
 });
 
+const slopeFigures = { alongWind: number, acrossWind: number };
+const slope = z
+  .strictObject(slopeFigures)
+  .describe('slope variance along and across the strongest wind, or the highest system');
+
 const border = z.strictObject({
   kRadPerM: z.number().positive(),
   fade: z.number().min(1),
@@ -137,8 +142,14 @@ const cascade = z.strictObject({
   amplitudesHash: hash,
   statistics: z.strictObject({
     significantHeightM: z.strictObject({ expected: number, measured: number.nullable() }),
-    slopeVariance: number,
-    compression: number.describe('standard deviation of J - 1 to first order'),
+    skewness: number.nullable(),
+    kurtosis: number.nullable(),
+    largestCrestM: number.nullable(),
+    deepestTroughM: number.nullable(),
+    slopeVariance: slope,
+    jacobianDeviation: number.describe('standard deviation of J - 1 to first order'),
+    foldedShare: share.nullable().describe('share of the surface with J < 0'),
+    heightStepMm: number.nullable(),
   }),
   foam: z
     .strictObject({
@@ -174,6 +185,14 @@ export const MANIFEST_SCHEMA: z.ZodType<Manifest> = z.strictObject({
   cascades: z.array(cascade).min(1).readonly(),
   statistics: z.strictObject({
     significantHeightM: z.strictObject({ target: number, expected: number, measured: number.nullable() }),
+    peakPeriodS: number,
+    meanZeroCrossingPeriodS: number,
+    skewness: number.nullable(),
+    kurtosis: number.nullable(),
+    largestCrestBoundM: number.nullable(),
+    deepestTroughBoundM: number.nullable(),
+    slopeVariance: z.strictObject({ ...slopeFigures, coxMunk: slope.nullable() }),
+    foamCoverage: z.strictObject({ measured: share.nullable(), whitecapFormula: share.nullable() }),
   }),
   losses: z.strictObject({
     notInAnyCascade: share,

@@ -12,6 +12,8 @@ export interface FieldDeviations {
   readonly velocityUp: number;
   readonly slopeEast: number;
   readonly slopeNorth: number;
+  /** Mean of slopeEast * slopeNorth: what a turn of the axes needs. */
+  readonly slopeProduct: number;
   readonly strainEastEast: number;
   readonly strainNorthNorth: number;
   readonly strainEastNorth: number;
@@ -36,7 +38,7 @@ export function fieldDeviations(
   const N = waves.lattice.resolution;
   const dk = wavenumberStep(waves.lattice);
   const omegaOfTurn = (2 * Math.PI) / waves.periodS;
-  const sum = new Float64Array(12);
+  const sum = new Float64Array(13);
   for (let iy = 0, i = 0; iy < N; iy++) {
     const ky = dk * waveIndex(iy, N);
     for (let ix = 0; ix < N; ix++, i++) {
@@ -67,13 +69,14 @@ export function fieldDeviations(
       sum[9] += height * (ky * ky * q) ** 2;
       sum[10] += height * (kx * ky * q) ** 2;
       sum[11] += height * ((kx * kx + ky * ky) * q) ** 2;
+      sum[12] += height * kx * ky;
     }
   }
   const [height, displacementEast, displacementNorth, velocityEast, velocityNorth, velocityUp] = sum.map(
     Math.sqrt,
   );
   const [slopeEast, slopeNorth, strainEastEast, strainNorthNorth, strainEastNorth, compression] = sum
-    .subarray(6)
+    .subarray(6, 12)
     .map(Math.sqrt);
   return {
     height,
@@ -84,6 +87,7 @@ export function fieldDeviations(
     velocityUp,
     slopeEast,
     slopeNorth,
+    slopeProduct: sum[12],
     strainEastEast,
     strainNorthNorth,
     strainEastNorth,

@@ -72,7 +72,7 @@ function foamInspection(facts: CascadeFacts, foam: ManifestFoam, residue: string
       source.add(
         field,
         predicted,
-        foamError(field, J.errorSquare, law, facts.cascade.statistics.compression),
+        foamError(field, J.errorSquare, law, facts.cascade.statistics.jacobianDeviation),
       );
     },
     verdicts() {

@@ -11,6 +11,7 @@ const DEVIATIONS: FieldDeviations = {
   velocityUp: 1,
   slopeEast: 0.1,
   slopeNorth: 0.09,
+  slopeProduct: 0,
   strainEastEast: 0.11,
   strainNorthNorth: 0.12,
   strainEastNorth: 0.05,

@@ -20,6 +20,7 @@ const DEVIATIONS: FieldDeviations = {
   velocityUp: 0.62,
   slopeEast: 0.08,
   slopeNorth: 0.057,
+  slopeProduct: 0,
   strainEastEast: 0.072,
   strainNorthNorth: 0.046,
   strainEastNorth: 0.034,

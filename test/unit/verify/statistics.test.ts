@@ -25,7 +25,17 @@ it('what is measured is what the manifest says of the files, and fits the waves'
     expect(measured.foamCoverage).toBeCloseTo(cascade.foam?.coverage.measured ?? 0, 10);
     const { alongWind, acrossWind } = measured.slopeVariance ?? { alongWind: 0, acrossWind: 0 };
     // White rounding noise counts most in the shortest waves, but is small.
-    expect((alongWind + acrossWind) / cascade.statistics.slopeVariance).toBeCloseTo(1, 4);
+    const stated = cascade.statistics;
+    expect(alongWind / stated.slopeVariance.alongWind).toBeCloseTo(1, 4);
+    expect(acrossWind / stated.slopeVariance.acrossWind).toBeCloseTo(1, 4);
+    expect(stated.skewness).toBeCloseTo(measured.skewness ?? Number.NaN, 10);
+    expect(stated.kurtosis).toBeCloseTo(measured.kurtosis ?? Number.NaN, 10);
+    expect([stated.deepestTroughM, stated.largestCrestM]).toEqual([
+      measured.deepestTroughM,
+      measured.largestCrestM,
+    ]);
+    expect(stated.foldedShare).toBe(0);
+    expect(stated.heightStepMm).toBe(measured.halfStepAtLargestMm);
     // Halves between 2^-1 and 1 lie 2^-11 apart, and so on down.
     const largest = Math.max(up.written.max, -up.written.min);
     expect(measured.halfStepAtLargestMm).toBe(1000 * 2 ** (Math.floor(Math.log2(largest)) - 10));
@@ -40,6 +50,13 @@ it('what is measured is what the manifest says of the files, and fits the waves'
     statistics.cascades.reduce((sum, one) => sum + (one.largestCrestM ?? 0), 0),
     12,
   );
+  const whole = manifest.statistics;
+  expect(whole.skewness).toBeCloseTo(sea.skewness ?? Number.NaN, 10);
+  expect(whole.kurtosis).toBeCloseTo(sea.kurtosis ?? Number.NaN, 10);
+  expect(whole.largestCrestBoundM).toBeCloseTo(sea.largestCrestBoundM ?? Number.NaN, 12);
+  expect(whole.foamCoverage.measured).toBeCloseTo(sea.foamCoverage ?? Number.NaN, 10);
+  expect(whole.foamCoverage.whitecapFormula).toBe(sea.whitecapCoverage);
+  expect(whole.slopeVariance.coxMunk?.alongWind).toBe(sea.slopeVariance?.clean?.upwind);
   // Two tiles of 0.03 together, screened.
   expect(sea.foamCoverage).toBeCloseTo(0.03, 3);
   // Peak of the one system at 2.4 s, turned to a whole number of turns of 6 s and thrown about by few waves.
