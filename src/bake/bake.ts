@@ -2,6 +2,7 @@ import { resolve } from 'node:path';
 import type { Manifest } from '../manifest/manifest.ts';
 import type { PlannedBake } from '../plan/plan-bake.ts';
 import { requireFolderPlace } from '../store/bake-folder.ts';
+import { requireEngine } from './cascade-maker.ts';
 import { concluded, type Run, unlessFinishedElsewhere } from './conclusion.ts';
 import { type Crew, withCrew } from './crew.ts';
 import { finishBake } from './finish.ts';
@@ -158,6 +159,7 @@ async function begin(
   foreign: Owner | null,
 ): Promise<void> {
   const missing = wanted.filter((id) => !crew.finished.has('frame', id));
+  requireEngine(crew.plan.engine);
   requireResources(crew.plan, root, Math.max(1, threads), missing);
   if (foreign !== null) removeBake(root, foreign);
   claimFolder(root, crew.plan);

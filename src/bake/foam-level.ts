@@ -23,7 +23,7 @@ const NARROW = 32;
 /** Rounds of false position; the bracket of at most some hundred codes is closed long before. */
 const MOST_ROUNDS = 16;
 /** Codes of a block of rows that a job may hold, bytes. */
-const BLOCK_BYTES = 16 * 2 ** 20;
+export const BLOCK_BYTES: number = 16 * 2 ** 20;
 
 /** Finds a cascade's breaking level: the given one, or the one whose written foam has the target's mean. */
 export async function foamLevel(crew: Crew, c: number, onRound: () => void): Promise<FoamLevel> {

@@ -103,7 +103,8 @@ function isWrittenFile(value: unknown): value is WrittenFile {
 function isStatistics(value: unknown): value is ChannelStatistics {
   return (
     isRecord(value) &&
-    ['sum', 'sumOfSquares', 'min', 'max', 'clipped'].every((key) => Number.isFinite(value[key]))
+    ['sum', 'sumOfSquares', 'min', 'max'].every((key) => Number.isFinite(value[key])) &&
+    isCount(value.clipped)
   );
 }
 

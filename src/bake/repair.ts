@@ -1,4 +1,5 @@
 import { InputError } from '../errors.ts';
+import { framePath, isFramePattern } from '../manifest/frame-path.ts';
 import type { Manifest } from '../manifest/manifest.ts';
 import { isIntact } from '../store/bake-folder.ts';
 import { otherTurns } from './clock.ts';
@@ -7,7 +8,7 @@ import { makeFoam } from './foam-stage.ts';
 import { makeFrames } from './frame-stage.ts';
 import type { FrameId } from './jobs.ts';
 import type { RunOptions } from './options.ts';
-import { expectedFiles } from './paths.ts';
+import { expectedFiles, MANIFEST_PATH } from './paths.ts';
 import { throwIfStopped } from './run-jobs.ts';
 import { wantedFrames } from './shard.ts';
 
@@ -17,13 +18,15 @@ const FILES_AT_ONCE = 8;
 /**
  * Paths of a finished bake's files that are not what its manifest says.
  *
- * @throws StoppedError after the signal
+ * @throws InputError where the manifest itself is damaged; StoppedError after the signal
  */
 export async function damagedFiles(
   folder: string,
-  { files }: Manifest,
+  manifest: Manifest,
   { signal = null, onProgress }: RunOptions,
 ): Promise<readonly string[]> {
+  requireComplete(manifest, `${folder}/${MANIFEST_PATH}`);
+  const { files } = manifest;
   const damaged: string[] = [];
   for (const [i, file] of files.entries()) {
     if (i % FILES_AT_ONCE === 0) {
@@ -34,6 +37,41 @@ export async function damagedFiles(
     if (!isIntact(folder, file)) damaged.push(file.path);
   }
   return damaged;
+}
+
+/**
+ * Checks that a manifest lists exactly the files that its cascades, maps and loops make, none of them outside.
+ *
+ * @param source its path, for messages
+ * @throws InputError
+ */
+export function requireComplete(manifest: Manifest, source: string): void {
+  const maps = manifest.cascades.flatMap(({ maps, loop }) =>
+    Object.values(maps).map(({ pattern }) => ({ pattern, loop })),
+  );
+  const count = maps.reduce((sum, { loop }) => sum + loop.frameCount, 0);
+  const listed = new Set(manifest.files.map(({ path }) => path));
+  // Counted first: the list is as long as the file, but a frame count may be any number.
+  const whole =
+    count === manifest.files.length &&
+    maps.every(({ pattern }) => isFramePattern(pattern)) &&
+    listed.size === count &&
+    maps.every(({ pattern, loop }) =>
+      Array.from({ length: loop.frameCount }, (_, n) => framePath(pattern, loop.firstFrame + n)).every(
+        (path) => listed.has(path),
+      ),
+    );
+  if (whole) return;
+  throw new InputError(source, [
+    {
+      path: 'files',
+      line: 0,
+      column: 0,
+      expected: `the ${count} files of its maps`,
+      found: `${manifest.files.length} others`,
+      remedy: 'The manifest is damaged: remove it and bake again.',
+    },
+  ]);
 }
 
 /** The frames that have to be made again so that every damaged file is. */

@@ -1,17 +1,30 @@
 import { UnavailableError } from '../errors.ts';
 import type { Plan } from '../plan/plan.ts';
 import { freeBytes } from '../store/bake-folder.ts';
+import { BLOCK_BYTES } from './foam-level.ts';
 import type { FrameId } from './jobs.ts';
 import { machineMemoryBytes } from './machine.ts';
 import { frameCost } from './shard.ts';
 
 /** A runtime's own memory for the main thread and for each worker, bytes: measured, `test/built` holds it to that. */
-const MAIN_THREAD_BYTES = 108e6;
-const WORKER_BYTES = 36e6;
+const MAIN_THREAD_BYTES = 140e6;
+const WORKER_BYTES = 38e6;
+/** What planning takes beside the waves it leaves, which the runtime does not give back, by bytes of waves. */
+const PLANNING_SHARE = 1.5;
 
 /** Memory a bake is expected to take at its peak, bytes. */
-export function expectedMemoryBytes({ report: { cost } }: Plan, threads: number): number {
-  return MAIN_THREAD_BYTES + cost.sharedBytes + threads * (WORKER_BYTES + cost.bytesPerThread);
+export function expectedMemoryBytes(plan: Plan, threads: number): number {
+  const { sharedBytes, bytesPerThread } = plan.report.cost;
+  const main = MAIN_THREAD_BYTES + (1 + PLANNING_SHARE) * sharedBytes;
+  return main + threads * (WORKER_BYTES + bytesPerThread + foamBlockBytes(plan, threads));
+}
+
+/** J codes of the whole loop that one thread holds while the breaking level is sought. */
+function foamBlockBytes({ cascades }: Plan, threads: number): number {
+  const loops = cascades.map(({ foam, resolution, loop }) =>
+    foam === null ? 0 : 2 * resolution ** 2 * loop.frameCount,
+  );
+  return Math.min(BLOCK_BYTES, Math.max(...loops) / Math.max(1, threads));
 }
 
 /**

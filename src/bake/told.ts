@@ -23,8 +23,8 @@ export function toldOf(plan: Plan, journals: readonly JournalContents<JournalLin
     for (const line of entries) {
       if (line.kind === 'begin' || line.kind === 'end') continue;
       if (line.plan !== plan.hash) unusable++;
-      else if (line.kind === 'level') levels.push(line);
-      else if (isOfPlan(plan, line)) frames.push(line);
+      else if (line.kind === 'level' && plan.cascades.at(line.cascade)?.foam != null) levels.push(line);
+      else if (line.kind !== 'level' && isOfPlan(plan, line)) frames.push(line);
       else unusable++;
     }
     if (unusable > 0) {

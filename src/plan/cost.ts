@@ -1,5 +1,5 @@
 import { SAMPLE_BYTES } from '../image/image.ts';
-import type { CostReport, PlannedCascade, PlannedMap } from './plan.ts';
+import type { CostReport, EngineName, PlannedCascade, PlannedMap } from './plan.ts';
 
 /**
  * Written bytes per raw byte by map and sample, measured on the shipped presets (DEVELOPERS.md, "Sizes"): wave fields
@@ -33,7 +33,7 @@ const TRANSFORMS: Readonly<Record<string, readonly string[]>> = {
 };
 
 /** What a bake will take: files, disk, memory and time, before it starts. */
-export function costReport(cascades: readonly PlannedCascade[]): CostReport {
+export function costReport(cascades: readonly PlannedCascade[], engine: EngineName): CostReport {
   let files = 0;
   let outputBytes = 0;
   let scratchBytes = 0;
@@ -52,8 +52,8 @@ export function costReport(cascades: readonly PlannedCascade[]): CostReport {
     outputBytes += frameCount * cascade.maps.reduce((sum, map) => sum + writtenBytes(map, texels), 0);
     if (cascade.foam !== null) scratchBytes += frameCount * texels * 2;
     sharedBytes += texels * 20;
-    // Two spectra, the packed pair, the engine's buffer, two fields a pair, three scratch planes, and the encoder's.
-    bytesPerThread += texels * (16 * 4 + 16 * pairs.size + 24) + 3 * storedBytes;
+    const buffers = bufferBytes(engine, texels, pairs.size, storedBytes);
+    bytesPerThread = engine === 'float32' ? Math.max(bytesPerThread, buffers) : bytesPerThread + buffers;
     coreSeconds +=
       frameCount *
       (texels * Math.log2(texels) * 0.0625 * pairs.size * SECONDS_PER_TRANSFORM_TEXEL +
@@ -68,6 +68,16 @@ export function costReport(cascades: readonly PlannedCascade[]): CostReport {
     bytesPerThread,
     coreSeconds,
   };
+}
+
+/**
+ * Memory in which one thread makes the frames of one cascade. Measured at 256 to 2048 texels (test/built/threads.test.ts
+ * compares it with what a bake takes); the cascades of a thread share that of the float32 engine.
+ */
+function bufferBytes(engine: EngineName, texels: number, pairs: number, storedBytes: number): number {
+  if (engine === 'float32') return 56 * texels + 2 * storedBytes;
+  // Two spectra, the packed pair, the engine's buffer, two fields a pair, three scratch planes, and the encoder's.
+  return texels * (16 * 4 + 16 * pairs + 24) + 3 * storedBytes;
 }
 
 function writtenBytes(map: PlannedMap, texels: number): number {

@@ -79,7 +79,7 @@ export function planBake(sea: Sea, options: PlanOptions = {}): PlannedBake {
     cascades: cascadeReports(layouts, tallies, tables),
     losses: lossReport(layouts, tallies, tables),
     loop: loopReport(layouts, tallies, tables, sea.loop, sea.water, sea.current),
-    cost: costReport(cascades),
+    cost: costReport(cascades, decided.engine),
     warnings: [],
   };
   const warnings = planWarnings(sea, { ...decided, report });
@@ -99,7 +99,7 @@ export function wavesOfPlan(plan: Plan): readonly CascadeWaves[] {
  * @throws InputError where this runtime draws other waves: its frames would not fit those of the others
  */
 export function plannedBakeOf(plan: Plan, source = '<plan>'): PlannedBake {
-  const waves = wavesOfPlan(plan);
+  const waves = wavesOrProblem(plan, source);
   const problems = plan.cascades.flatMap(({ amplitudesHash: expected }, c) => {
     const found = amplitudesHash(waves[c].amplitudes);
     if (found === expected) return [];
@@ -109,6 +109,20 @@ export function plannedBakeOf(plan: Plan, source = '<plan>'): PlannedBake {
   });
   if (problems.length > 0) throw new InputError(source, problems);
   return { plan, waves };
+}
+
+/** The parameters of a plan's systems are only known to be of a published form once that form has taken them. */
+function wavesOrProblem(plan: Plan, source: string): readonly CascadeWaves[] {
+  try {
+    return wavesOfPlan(plan);
+  } catch (cause) {
+    const found = cause instanceof Error ? cause.message : String(cause);
+    const expected = 'wave systems that can be drawn';
+    const remedy = 'The file was altered after it was saved: plan the sea again.';
+    throw new InputError(source, [{ path: 'systems', line: 0, column: 0, expected, found, remedy }], {
+      cause,
+    });
+  }
 }
 
 /** The plan's hash as its content gives it. */

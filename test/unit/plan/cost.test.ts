@@ -28,7 +28,7 @@ describe('costReport', () => {
       (sum, { channels, sample }) => sum + 8 * 32 * 32 * channels.length * bytes[sample],
       0,
     );
-    const { outputBytes } = costReport(cascades);
+    const { outputBytes } = costReport(cascades, 'float32');
     expect(outputBytes).toBeLessThan(raw);
     expect(outputBytes).toBeGreaterThan(raw / 10);
   });
@@ -44,5 +44,15 @@ describe('costReport', () => {
     expect(long.outputBytes / small.outputBytes).toBeCloseTo(2, 2);
     expect(long.bytesPerThread).toBe(small.bytesPerThread);
     expect(long.coreSeconds).toBeGreaterThan(small.coreSeconds);
+  });
+
+  it('has the cascades of a thread share the memory of the float32 engine, and no other', () => {
+    const engines = ['float32', 'float64'] as const;
+    const [one, two] = [tinySea(), tinyTwoCascadeSea()].map((sea) =>
+      engines.map((engine) => planBake(sea, { engine }).plan.report.cost.bytesPerThread),
+    );
+    expect(two[0]).toBe(one[0]);
+    expect(two[1]).toBe(2 * one[1]);
+    expect(one[0]).toBeLessThan(one[1]);
   });
 });
