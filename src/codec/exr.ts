@@ -1,11 +1,13 @@
-import { blankPlane, type Image, SAMPLE_BYTES } from '../image/image.ts';
-import { concatenation } from './bytes.ts';
-import type { Codec, DecodedImage, FrameMetadata } from './codec.ts';
+import { blankPlane, SAMPLE_BYTES } from '../image/image.ts';
+import type { Codec, DecodedImage } from './codec.ts';
+import type { PixelCoder } from './coder.ts';
 import { damage, refuseLyingSize } from './damage.ts';
-import { fillFromBlock, packedBlock } from './exr-block.ts';
-import { exrReader, int32LE, uint64LE, utf8 } from './exr-bytes.ts';
-import { exrPreamble, LINES_PER_BLOCK, ZIP_COMPRESSION } from './exr-header.ts';
+import { fillFromBlock } from './exr-block.ts';
+import { exrReader, utf8 } from './exr-bytes.ts';
+import { exrPreamble, LINES_PER_BLOCK } from './exr-header.ts';
 import { exrHeaderFields } from './exr-header-fields.ts';
+import { exrByKernel } from './exr-kernel-coder.ts';
+import { exrByZlib } from './exr-zlib-coder.ts';
 import { ownAttributes, requireEncodable } from './labels.ts';
 
 /**
@@ -13,47 +15,33 @@ import { ownAttributes, requireEncodable } from './labels.ts';
  * negative values.
  * Source: "OpenEXR File Layout", the published document of the format.
  */
-export const EXR: Codec = {
-  format: 'exr',
-  extension: 'exr',
-  samples: ['half', 'float'],
-  channelSets: 'any',
-  encode: encodeExr,
-  decode: decodeExr,
-};
+export const EXR: Codec = codecBy(exrByKernel);
 
-function encodeExr(image: Image, metadata: FrameMetadata): Uint8Array {
-  requireEncodable(EXR, image, metadata);
-  const { width, height, sample } = image;
+/** The same format by Node's zlib. */
+export const EXR_BY_ZLIB: Codec = codecBy(exrByZlib);
 
-  // Channels, in byte order of their names ------------------------------------------------------------
-  const order = image.channels
-    .map(({ name }, c) => ({ name, c, bytes: utf8(name) }))
-    .sort((a, b) => Buffer.compare(a.bytes, b.bytes));
-  const channels = order.map(({ name }) => name);
-  const planes = order.map(({ c }) => image.planes[c]);
-
-  // Header --------------------------------------------------------------------------------------------
-  const attributes = ownAttributes(image, metadata);
-  const preamble = exrPreamble({ width, height, sample, channels, metadata, attributes });
-
-  // Blocks of scan lines: y of the first line, size, pixels -------------------------------------------
-  const linesPerBlock = LINES_PER_BLOCK[ZIP_COMPRESSION];
-  const blocks: Uint8Array[][] = [];
-  for (let y = 0; y < height; y += linesPerBlock) {
-    const pixels = packedBlock(planes, width, y * width, Math.min(linesPerBlock, height - y));
-    blocks.push([int32LE(y), int32LE(pixels.length), pixels]);
-  }
-
-  // Offset table: where in the file each block begins -------------------------------------------------
-  const offsets: Uint8Array[] = [];
-  let offset = preamble.length + 8 * blocks.length;
-  for (const [y, size, pixels] of blocks) {
-    offsets.push(uint64LE(offset));
-    offset += y.length + size.length + pixels.length;
-  }
-
-  return concatenation([preamble, ...offsets, ...blocks.flat()]);
+function codecBy(coder: PixelCoder): Codec {
+  const codec: Codec = {
+    format: 'exr',
+    extension: 'exr',
+    samples: ['half', 'float'],
+    channelSets: 'any',
+    encode(image, metadata) {
+      requireEncodable(codec, image, metadata);
+      const { width, height, sample } = image;
+      // Channels go in byte order of their names.
+      const order = image.channels
+        .map(({ name }, c) => ({ name, c, bytes: utf8(name) }))
+        .sort((a, b) => Buffer.compare(a.bytes, b.bytes));
+      const channels = order.map(({ name }) => name);
+      const attributes = ownAttributes(image, metadata);
+      const head = exrPreamble({ width, height, sample, channels, metadata, attributes });
+      const planes = order.map(({ c }) => image.planes[c]);
+      return coder(head, planes, width, height);
+    },
+    decode: decodeExr,
+  };
+  return codec;
 }
 
 function decodeExr(bytes: Uint8Array, source = 'EXR image'): DecodedImage {
