@@ -23,14 +23,30 @@ export interface HalfPlane {
 }
 
 /** The half plane of some waves: of each row, everything between its outermost waves k or -k. */
-export function occupiedHalfPlane(waves: WaveAmplitudes): HalfPlane {
-  const N = waves.lattice.resolution;
+export function occupiedHalfPlane({ amplitude: A, lattice }: WaveAmplitudes): HalfPlane {
+  const N = lattice.resolution;
   const half = N / 2;
   const east = new Int32Array(half).fill(-1);
   const west = new Int32Array(half);
-  for (let ny = 0; ny < half; ny++) {
-    for (let n = half - 1; n > east[ny]; n--) if (isOccupied(waves, n, ny)) east[ny] = n;
-    for (let n = half - 1; n > west[ny]; n--) if (isOccupied(waves, N - n, ny)) west[ny] = n;
+  const isWave = (i: number): boolean => A[2 * i] !== 0 || A[2 * i + 1] !== 0;
+  for (let iy = 0; iy < N; iy++) {
+    if (iy === half) continue;
+    const row = iy * N;
+    let e = half - 1;
+    while (e >= 0 && !isWave(row + e)) e--;
+    let w = half - 1;
+    while (w > 0 && !isWave(row + N - w)) w--;
+    const ny = Math.min(iy, N - iy);
+    if (iy < half) {
+      east[ny] = Math.max(east[ny], e);
+      west[ny] = Math.max(west[ny], w);
+    }
+    if (iy === 0 || iy > half) {
+      // Opposites: what lies east here lies west there, but for nx = 0.
+      const opposite = w > 0 ? w : isWave(row) ? 0 : -1;
+      east[ny] = Math.max(east[ny], opposite);
+      west[ny] = Math.max(west[ny], e);
+    }
   }
   return halfPlane(N, east, west);
 }
@@ -71,15 +87,6 @@ function halfPlane(N: number, east: Int32Array, west: Int32Array): HalfPlane {
   }
   const inner = rows <= N / 4 && widestEast < N / 4 && widestWest < N / 4;
   return { rows, spans, vectors, inner };
-}
-
-/** Whether wave k or -k has an amplitude. */
-function isOccupied({ amplitude, lattice }: WaveAmplitudes, ix: number, iy: number): boolean {
-  const N = lattice.resolution;
-  const i = 2 * (iy * N + ix);
-  if (amplitude[i] !== 0 || amplitude[i + 1] !== 0) return true;
-  const j = 2 * (oppositeIndex(iy, N) * N + oppositeIndex(ix, N));
-  return amplitude[j] !== 0 || amplitude[j + 1] !== 0;
 }
 
 /** Calls `visit` with the lattice index of every wave of a half plane and of its opposite, in the kernel's order. */

@@ -58,8 +58,12 @@ describe('the occupied half plane', () => {
       [2, 0, 2, 0, 2, 0, 2, 0],
       true,
     ],
+    ['a wave straight south', [[0, -2]], [1, 0, 1, 0, 1, 0], true],
+    ['waves along the row of 0', [[-6, 0]], [2, 2], true],
     ['the last wave below N/4', [[7, 0]], [2, 2], true],
     ['the first wave at N/4', [[8, 0]], [3, 2], false],
+    ['a wave at N/4 eastward alone', [[8, 1]], [3, 0, 3, 0], false],
+    ['a wave at N/4 westward alone', [[-8, 1]], [0, 2, 0, 2], false],
     ['a row at N/4', [[0, 8]], new Array(9).fill([1, 0]).flat(), false],
   ] as const)('of %s', (_what, places, spans, inner) => {
     const plane = occupiedHalfPlane(wavesAt(32, places));
