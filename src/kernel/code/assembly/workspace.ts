@@ -67,8 +67,11 @@ export const MATCH_SEQUENCES: usize = 0x71000;
 /** u64[43692]: a block of at most LARGEST_BLOCK bytes as sequences with runs: one for every 6 bytes, and the last. */
 export const RUN_SEQUENCES: usize = 0x91000;
 
-/** Bytes in the largest block: half of the level 2 cache of a small core, for rows are filtered into it first. */
-export const LARGEST_BLOCK: usize = 0x40000;
+/**
+ * Bytes in the largest block. A widely used inflater (fflate 0.8, as it reads streams) makes room for 128 KiB when a
+ * block of literals begins, and loses without a word what a longer one holds.
+ */
+export const LARGEST_BLOCK: usize = 0x20000;
 /** Bytes in the largest block that is searched for matches: places in it fit 16 bits. */
 export const SEARCHED_BLOCK: usize = 0x10000;
 
