@@ -25,6 +25,7 @@ export interface CodeProgram {
     inPairs: boolean,
     scratch: number,
   ): number;
+  putStream(out: number, from: number, to: number, kind: number): number;
 }
 
 /** Where in the kernel's memory the parts of one image are, addresses in bytes. */

@@ -49,9 +49,14 @@ const LARGEST_FIXED: usize = 1024;
 /** Whether the codes made last are the fixed ones. */
 let fixed: bool = false;
 
-/** Bits that searches have saved so far. */
 let savedBits: usize = 0;
 
+/** Forgets what searches have saved. */
+export function beginSearches(): void {
+  savedBits = 0;
+}
+
+/** Bits that searches have saved since. */
 export function bitsSaved(): usize {
   return savedBits;
 }
@@ -68,7 +73,7 @@ const SMALLEST_NOISE: usize = 0x2000;
 export function putCompressed(start: usize, from: usize, to: usize, kind: usize, isLast: bool): void {
   const largest = kind >= REPETITIVE ? SEARCHED_BLOCK : LARGEST_BLOCK;
   if (kind >= REPETITIVE) beginMatches();
-  const blocks = (to - from + largest - 1) / largest;
+  const blocks = max<usize>(1, (to - from + largest - 1) / largest);
   for (let left = blocks; left > 0; left--) {
     const end = left === 1 ? to : from + (((to - from) / left) & ~1);
     putBlock(start, from, end, kind, isLast && left === 1);
@@ -226,18 +231,19 @@ function symbolBits(): usize {
 }
 
 function storedBits(bytes: usize): usize {
-  return (bytes << 3) + 40 * ((bytes + LONGEST_STORED - 1) / LONGEST_STORED);
+  const pieces = max<usize>(1, (bytes + LONGEST_STORED - 1) / LONGEST_STORED);
+  return (bytes + 5 * pieces) << 3;
 }
 
 function putStored(from: usize, to: usize, isLast: bool): void {
-  while (from < to) {
+  do {
     const bytes = min(to - from, LONGEST_STORED);
     putBits(isLast && from + bytes === to ? 1 : 0, 3);
     alignToByte();
     putBits(bytes | ((bytes ^ 0xffff) << 16), 32);
     putBytes(from, bytes);
     from += bytes;
-  }
+  } while (from < to);
 }
 
 /** Writes the symbols of a block by the codes made last. */

@@ -1,4 +1,4 @@
-import { ANY, bitsSaved, PERHAPS_NOISE, REPETITIVE, REPETITIVE_PAIRS } from './deflate';
+import { ANY, beginSearches, bitsSaved, PERHAPS_NOISE, REPETITIVE, REPETITIVE_PAIRS } from './deflate';
 import { beginZlib, endZlib, putZlib } from './zlib-stream';
 
 /*
@@ -17,15 +17,21 @@ import { beginZlib, endZlib, putZlib } from './zlib-stream';
 /** Bytes up to which a block is not worth two headers. */
 const SMALL: usize = 2048;
 
-/** What the search must save of a block: 1 in so many bits. It takes twice the time of all else. */
-const LEAST_SAVED: usize = 57;
+/**
+ * The search takes twice the time of all else together, so it goes on in an image only while it has saved this part of
+ * what was written: 1 in so many.
+ */
+const LEAST_SAVED: u64 = 57;
 
-/** Whether the search has paid on all blocks of the image so far. */
 let searching: bool = true;
+let savedBits: u64 = 0;
+let writtenBits: u64 = 0;
 
 /** Begins an image. */
 export function beginExr(): void {
   searching = true;
+  savedBits = 0;
+  writtenBits = 0;
 }
 
 /** Room for whole vectors behind each part of the scratch memory. */
@@ -39,7 +45,7 @@ export function exrScratchBytes(bytes: usize): usize {
 /**
  * Writes a block.
  *
- * @param out receives the stream; room for 9/8 of the block and 1 KiB
+ * @param out receives the stream; room for twice the block and 1 KiB
  * @param planes the block's rows in the plane of the first channel of the file
  * @param step bytes from one plane to the next
  * @param rowBytes bytes of a row of one plane
@@ -74,7 +80,7 @@ export function putExrBlock(
   fillDifferences(differences + half, high, half, load<u8>(low + half - 1));
 
   beginZlib(out);
-  const savedBefore = bitsSaved();
+  beginSearches();
   if (bytes <= SMALL) {
     putZlib(differences, differences, differences + bytes, REPETITIVE, true);
   } else {
@@ -83,7 +89,9 @@ export function putExrBlock(
     putZlib(differences, differences + half, differences + bytes, searching ? repetitive : ANY, true);
   }
   const length = endZlib() - out;
-  if (searching && (bitsSaved() - savedBefore) * LEAST_SAVED < length << 3) searching = false;
+  savedBits += bitsSaved();
+  writtenBits += (<u64>length) << 3;
+  if (savedBits * LEAST_SAVED < writtenBits) searching = false;
   if (length < bytes) return length;
   putPlain(out, planes, step, channels, rowBytes, rows);
   return bytes;

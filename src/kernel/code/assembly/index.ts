@@ -1,4 +1,4 @@
-// What the host may call: PNG pixels band by band, and blocks of OpenEXR.
+// What the host may call: PNG pixels band by band, blocks of OpenEXR, and any bytes, which only tests do.
 
 export { beginExr, exrScratchBytes, putExrBlock } from './exr';
 export {
@@ -12,3 +12,4 @@ export {
   setRowAbove,
 } from './png';
 export { LARGEST_BLOCK, WORKSPACE_BYTES } from './workspace';
+export { putStream } from './zlib-stream';

@@ -74,7 +74,7 @@ function fillPrices(): usize {
     store<u16>(PRICES + (i << 1), <u16>sum);
     store<u16>(dear, <u16>i);
     sum += price;
-    dear += (<usize>(price >= DEAR_BITS)) << 1;
+    dear += usize(price >= DEAR_BITS) << 1;
   }
   v128.store(PRICES + (bytes << 1), i16x8.splat(<i16>sum));
   // A key needs the byte before and the byte behind.
@@ -93,7 +93,7 @@ function fillPairPrices(): usize {
     store<u16>(PRICES + (i << 1) + 2, <u16>(sum + price));
     store<u16>(dear, <u16>i);
     sum += price + <usize>load<u8>(LITERAL_LENGTHS + load<u8>(block + i + 1));
-    dear += (<usize>(price >= DEAR_BITS)) << 1;
+    dear += usize(price >= DEAR_BITS) << 1;
   }
   v128.store(PRICES + (bytes << 1), i16x8.splat(<i16>sum));
   while (dear > DEAR_PLACES && <usize>load<u16>(dear - 2) + 4 > bytes) dear -= 2;
@@ -152,7 +152,7 @@ function saved(window: v128, prices: usize, at: usize, distance: usize): i32 {
 
 /** Appends the match around `at`, as far as it goes, if it saves anything. */
 function addMatch(at: usize, distance: usize): void {
-  if (distance === 0 || distance > WINDOW || at - FARTHEST_BACK < streamStart + distance) return;
+  if (distance === 0 || distance > WINDOW || at < streamStart + distance) return;
   const start = startOfMatch(at, distance);
   const end = endOfMatch(at, distance, min(blockEnd, start + LONGEST_MATCH));
   const length = end - start;
@@ -167,9 +167,9 @@ function pricedTo(at: usize): u32 {
   return load<u16>(PRICES + ((at - block) << 1));
 }
 
-/** The first byte of the repeat that reaches to `at`; not before the last match, nor far back. */
+/** The first byte of the repeat that reaches to `at`; not before the last match, nor of the stream, nor far back. */
 function startOfMatch(at: usize, distance: usize): usize {
-  const first = max(literalsFrom, at - FARTHEST_BACK);
+  const first = max(max(literalsFrom, streamStart + distance), at - FARTHEST_BACK);
   while (at > first && load<u8>(at - 1) === load<u8>(at - 1 - distance)) at--;
   return at;
 }

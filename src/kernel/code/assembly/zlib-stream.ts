@@ -30,3 +30,15 @@ export function endZlib(): usize {
   putBits(bswap<u32>(checksum), 32);
   return bitCursor();
 }
+
+/**
+ * A stream of its own for some bytes.
+ * @param out receives it; room for twice the bytes, or for 64 KiB where that is more
+ * @param kind see putCompressed
+ * @returns bytes written
+ */
+export function putStream(out: usize, from: usize, to: usize, kind: usize): usize {
+  beginZlib(out);
+  putZlib(from, from, to, kind, true);
+  return endZlib() - out;
+}
