@@ -23,8 +23,8 @@ export interface Float32Synthesis {
   /** Turns the waves to frame n, any integer; n + N gives the same bits as n. What follows is of this frame. */
   turnTo(n: number): void;
   /**
-   * Fills samples of maps, up to eight at once: the more at once, the less memory is read. Transforms are made when
-   * first needed and kept for the frame's other maps.
+   * Fills samples of maps, up to eight in one pass over the fields. Transforms are made when first needed and kept for
+   * the frame's other maps.
    * @returns statistics by request and channel
    */
   samples(requests: readonly SamplesRequest[]): readonly (readonly SampleStatistics[])[];
