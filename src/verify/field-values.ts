@@ -22,6 +22,8 @@ export interface FieldValues {
   readonly values: Float64Array;
   readonly rounding: Rounding;
   readonly channel: ManifestChannel;
+  /** Largest magnitude of any channel of its map over the loop, SI. */
+  readonly size: number;
   /** Texels at the lowest or highest code of an integer sample: clipped ones are among them. */
   readonly extremes: number;
 }
@@ -70,9 +72,16 @@ function decodedField(
     const plane = image.planes[image.channels.indexOf(channel.name)];
     const { extremes, ...rounding } = fillValues(values, plane, planned, channel);
     if (rowZero === 'north') turnOver(values, N);
-    return { quantity, values, rounding, channel, extremes };
+    return { quantity, values, rounding, channel, size: mapSize(planned), extremes };
   }
   return null;
+}
+
+function mapSize({ channels }: ManifestMap): number {
+  return channels.reduce((most, channel) => {
+    const { min, max } = channel.written;
+    return Math.max(most, siPerUnit(channel) * Math.max(Math.abs(min), Math.abs(max)));
+  }, 0);
 }
 
 /** Fills SI values in the order of the file. */

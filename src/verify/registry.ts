@@ -9,6 +9,7 @@ import { HEIGHTS } from './checks/heights.ts';
 import { HORIZONTAL } from './checks/horizontal.ts';
 import { LABELS } from './checks/labels.ts';
 import { LOOP } from './checks/loop.ts';
+import { SEA } from './checks/sea.ts';
 import { SPECTRUM } from './checks/spectrum.ts';
 import { SPOT } from './checks/spot.ts';
 import { TILE } from './checks/tile.ts';
@@ -18,6 +19,7 @@ import { WAVES } from './checks/waves.ts';
 export const CHECKS: readonly Check[] = [
   FILES,
   LABELS,
+  SEA,
   WAVES,
   FIGURES,
   LOOP,

@@ -32,9 +32,9 @@ export function residual(engine: string): Residual {
   const worst = new Map<string, { readonly sum: number; readonly count: number; readonly largest: number }>();
   let frames = 0;
   return {
-    add({ quantity, values, rounding }, predicted, errorSquare) {
+    add({ quantity, values, rounding, size }, predicted, errorSquare) {
       frames++;
-      const floor = (noise * deviation(values)) ** 2 + Number.MIN_VALUE;
+      const floor = (noise * size) ** 2 + Number.MIN_VALUE;
       const sofar = worst.get(quantity) ?? { sum: 0, count: 0, largest: 0 };
       let { sum, largest } = sofar;
       for (let i = 0; i < values.length; i++) {
@@ -66,17 +66,6 @@ export function residual(engine: string): Residual {
       );
     },
   };
-}
-
-function deviation(values: Float64Array): number {
-  let sum = 0;
-  let squares = 0;
-  for (const value of values) {
-    sum += value;
-    squares += value * value;
-  }
-  const mean = sum / values.length;
-  return Math.sqrt(Math.max(0, squares / values.length - mean * mean));
 }
 
 /**

@@ -77,7 +77,13 @@ export function meanSquareOfClipping(share: number, extent: number, variance: nu
   return share === 0 ? 0 : (share * 2 * variance * variance) / (extent * extent);
 }
 
-/** Noise of the transforms themselves, as a share of a field's deviation: a bound, far above what tests see. */
+/**
+ * Noise of the transforms themselves, as a share of the largest field of its kind: what the engines promise of
+ * themselves (src/field/float32-engine.ts), and for the reference far above what tests see.
+ */
 export function engineNoise(engine: string): number {
-  return engine === 'float64' ? 1e-11 : 1e-5;
+  return engine === 'float64' ? 1e-12 : 1e-6;
 }
+
+/** The largest field of a kind in deviations of one: what turns `engineNoise` into a share of a deviation. */
+export const LARGEST_IN_DEVIATIONS = 6;

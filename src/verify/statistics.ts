@@ -20,6 +20,7 @@ import { type FoldWatch, foldedShareOfSum, foldWatch } from './folding.ts';
 import type { SeenFrame } from './frame-reader.ts';
 import { heightOf } from './surface.ts';
 import { peakPeriodS, type WaveMoments, waveMoments } from './wave-moments.ts';
+import { strongestWind, windDirection } from './wind.ts';
 
 /** What a bake's files hold, measured on them. Lengths in m whatever the unit of the files. */
 export interface MeasuredStatistics {
@@ -100,7 +101,7 @@ interface CascadeMeasures {
 
 export function statisticsWatch(bake: BakeFacts): StatisticsWatch {
   const measures: CascadeMeasures[] = [];
-  const windToward = windDirection(bake);
+  const windToward = windDirection(bake.manifest);
   return {
     cascade(facts) {
       let heights = NO_VALUES;
@@ -131,19 +132,6 @@ export function statisticsWatch(bake: BakeFacts): StatisticsWatch {
     },
     statistics: () => ({ cascades: measures.map(cascadeStatistics), sea: seaStatistics(bake, measures) }),
   };
-}
-
-/** Direction toward which the strongest wind blows, or without one the highest system runs; rad counter-clockwise from east. */
-function windDirection({ manifest: { sea } }: BakeFacts): number {
-  const [first] = [...sea.systems].sort(
-    (a, b) => (b.windSpeedMps ?? 0) - (a.windSpeedMps ?? 0) || b.significantHeightM - a.significantHeightM,
-  );
-  return first?.towardRad ?? 0;
-}
-
-function strongestWind({ manifest: { sea } }: BakeFacts): number | null {
-  const winds = sea.systems.flatMap(({ windSpeedMps }) => windSpeedMps ?? []);
-  return winds.length === 0 ? null : Math.max(...winds);
 }
 
 function isWithin(wind: number | null, least: number, most: number): wind is number {
@@ -229,7 +217,7 @@ function seaStatistics(bake: BakeFacts, measures: readonly CascadeMeasures[]): S
   const moments = measures.flatMap((one) => one.moments ?? []);
   const shown = moments.length === measures.length;
   const foams = measures.map(({ foamCoverage }) => foamCoverage);
-  const wind = strongestWind(bake);
+  const wind = strongestWind(bake.manifest);
   return {
     significantHeightM: { target, expected, measured: seen ? 4 * Math.sqrt(m2) : null },
     peakPeriodS: shown ? peakPeriodS(moments) : null,

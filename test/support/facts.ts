@@ -37,7 +37,7 @@ export function frameOf(
       meanSquare,
       clipping: 0,
     } as const;
-    return { quantity, values, rounding, channel: { ...channel, quantity }, extremes: 0 };
+    return { quantity, values, rounding, channel: { ...channel, quantity }, size: 0, extremes: 0 };
   };
   return { index: 0, number: 1, files: [], field };
 }

@@ -2,7 +2,8 @@ import { mkdirSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { bake } from '../../src/bake/bake.ts';
-import { planBake } from '../../src/plan/plan-bake.ts';
+import type { EngineName } from '../../src/plan/plan.ts';
+import { PLAN_DEFAULTS, planBake } from '../../src/plan/plan-bake.ts';
 import { seaFromObject } from '../../src/sea/parse.ts';
 
 // Bakes small enough for a test: grids of 32 and 64, one or two cascades, a dozen or two of frames.
@@ -136,6 +137,20 @@ export const SMALL_SEAS: Readonly<Record<string, Keys>> = Object.freeze({
     maps: { displacement: 'exr', velocity: 'exr', slope: 'exr', strain: 'exr', jacobian: 'exr', foam: 'exr' },
     cascades: ONE_TILE,
   },
+  // Large enough for the manifest to count every second texel only.
+  'large tile': {
+    cascades: [{ patch: 40, resolution: 128 }],
+    loop: { frames: 6, frameRate: 4 },
+    maps: { displacement: 'exr' },
+    foam: 'off',
+  },
+  'large tile, row zero south': {
+    cascades: [{ patch: 40, resolution: 128 }],
+    loop: { frames: 6, frameRate: 4 },
+    maps: { height: { format: 'png', bits: 8 } },
+    output: { rowZero: 'south' },
+    foam: 'off',
+  },
   'height alone': { maps: { height: 'exr' }, cascades: ONE_TILE, foam: 'off' },
   'height with maps that follow from it': {
     maps: {
@@ -174,8 +189,8 @@ export const SMALL_SEAS: Readonly<Record<string, Keys>> = Object.freeze({
 
 /** A folder that bakes are made in; `remove` it when the tests are over. */
 export interface BakeShelf {
-  /** The folder of a small bake, made when it is first asked for. */
-  readonly bake: (name: keyof typeof SMALL_SEAS, changes?: Keys) => Promise<string>;
+  /** The folder of a small bake, made when it is first asked for; by the default engine unless another is named. */
+  readonly bake: (name: keyof typeof SMALL_SEAS, changes?: Keys, engine?: EngineName) => Promise<string>;
   readonly remove: () => void;
 }
 
@@ -184,14 +199,14 @@ export function bakeShelf(): BakeShelf {
   let made = 0;
   const shelf = new Map<string, string>();
   return {
-    async bake(name, changes = {}) {
-      const key = JSON.stringify([name, changes]);
+    async bake(name, changes = {}, engine = PLAN_DEFAULTS.engine) {
+      const key = JSON.stringify([name, changes, engine]);
       const before = shelf.get(key);
       if (before !== undefined) return before;
       const folder = join(root, String(made++));
       mkdirSync(folder);
       const keys = { ...SMALL_SEA_KEYS, ...SMALL_SEAS[name], ...changes };
-      await bake(planBake(seaFromObject(keys, { source: name })), folder, { threads: 0 });
+      await bake(planBake(seaFromObject(keys, { source: name }), { engine }), folder, { threads: 0 });
       shelf.set(key, folder);
       return folder;
     },

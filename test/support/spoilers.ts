@@ -6,6 +6,14 @@ import { LARGEST_CODE, type Plane, type Quantity, type SampleType } from '../../
 import { framePath } from '../../src/manifest/frame-path.ts';
 import type { Manifest, ManifestCascade, ManifestChannel, ManifestMap } from '../../src/manifest/manifest.ts';
 import { halfFromNumber, numberFromHalf } from '../../src/math/half.ts';
+import {
+  kurtosis,
+  NO_VALUES,
+  type PowerSums,
+  powerSums,
+  skewness,
+  variance,
+} from '../../src/math/statistics.ts';
 import type { MapName } from '../../src/sea/sea.ts';
 import { keyedIndices } from '../../src/verify/keyed.ts';
 import { planeTransform } from '../../src/verify/plane-transform.ts';
@@ -89,12 +97,10 @@ export function copiedBake(sound: string, folder: string): SpoiledBake {
         const bytes = readFileSync(join(folder, entry.path));
         Object.assign(entry, { bytes: bytes.length, sha256: sha256(bytes) });
       }
-      for (const cascade of manifest.cascades)
-        restateFigures(cascade, (map, index) => read(cascade, map, index));
-      const squares = manifest.cascades.map(
-        ({ statistics }) => (statistics.significantHeightM.measured ?? 0) ** 2,
-      );
-      manifest.statistics.significantHeightM.measured = Math.sqrt(squares.reduce((a, b) => a + b, 0));
+      const heights = manifest.cascades.map((cascade) => {
+        return restateFigures(cascade, (map, index) => read(cascade, map, index));
+      });
+      restateSea(manifest, heights);
       save();
     },
   };
@@ -123,10 +129,13 @@ function encodedPlane(values: Float64Array, sample: SampleType, { decode }: Mani
   return sample === 'uint8' ? Uint8Array.from(codes) : Uint16Array.from(codes);
 }
 
+/** Makes the figures of a cascade those of its files; the moments of its heights are returned, m. */
 function restateFigures(
   cascade: Writable<ManifestCascade>,
   read: (map: MapName, index: number) => Map<Quantity, Float64Array>,
-): void {
+): PowerSums {
+  const { statistics } = cascade;
+  let heights = NO_VALUES;
   for (const [map, { channels }] of Object.entries(cascade.maps) as [MapName, Writable<ManifestMap>][]) {
     const all = new Map<Quantity, number[]>(channels.map(({ quantity }) => [quantity, []]));
     for (let index = 0; index < cascade.loop.frameCount; index++) {
@@ -140,11 +149,35 @@ function restateFigures(
       const least = values.reduce((a, b) => Math.min(a, b), Infinity);
       Object.assign(written, { min: least, max: largest, mean, deviation: Math.sqrt(square) });
       if (quantity === 'displacement-up') {
-        cascade.statistics.significantHeightM.measured = 4 * written.deviation * (unit === 'cm' ? 0.01 : 1);
+        const metres = unit === 'cm' ? 0.01 : 1;
+        heights = powerSums(values.map((value) => value * metres));
+        statistics.significantHeightM.measured = 4 * written.deviation * metres;
+        statistics.skewness = skewness(heights);
+        statistics.kurtosis = kurtosis(heights);
+        statistics.largestCrestM = largest * metres;
+        statistics.deepestTroughM = least * metres;
       }
       if (quantity === 'foam' && cascade.foam !== null) cascade.foam.coverage.measured = mean;
     }
   }
+  return heights;
+}
+
+/** Makes the figures of the whole sea those of its cascades. */
+function restateSea({ cascades, statistics }: Writable<Manifest>, heights: readonly PowerSums[]): void {
+  const total = (f: (cascade: Writable<ManifestCascade>, sums: PowerSums) => number): number =>
+    cascades.reduce((sum, cascade, c) => sum + f(cascade, heights[c]), 0);
+  const m2 = total((_, sums) => variance(sums));
+  statistics.significantHeightM.measured = Math.hypot(
+    ...cascades.map((cascade) => cascade.statistics.significantHeightM.measured ?? 0),
+  );
+  statistics.skewness = total((_, sums) => skewness(sums) * variance(sums) ** 1.5) / m2 ** 1.5;
+  statistics.kurtosis = 3 + total((_, sums) => (kurtosis(sums) - 3) * variance(sums) ** 2) / m2 ** 2;
+  statistics.largestCrestBoundM = total((cascade) => cascade.statistics.largestCrestM ?? 0);
+  statistics.deepestTroughBoundM = total((cascade) => cascade.statistics.deepestTroughM ?? 0);
+  const foams = cascades.flatMap(({ foam }) => (foam === null ? [] : [foam.coverage.measured]));
+  const clear = foams.reduce((product, coverage) => product * (1 - coverage), 1);
+  statistics.foamCoverage.measured = foams.length === 0 ? null : 1 - clear;
 }
 
 /** One way to spoil a bake, and the checks that must then fail: those and no others. */
@@ -493,17 +526,9 @@ export const SPOILERS: readonly Spoiler[] = [
     spoil(bake, twin) {
       if (twin === null) throw new Error('no twin');
       // The files of one sea with all that a manifest says of the sea of the other.
-      bake.manifest.sea = twin.sea as Writable<Manifest>['sea'];
-      bake.manifest.cascades.forEach((cascade, c) => {
-        const { amplitudesHash, statistics } = twin.cascades[c];
-        cascade.amplitudesHash = amplitudesHash;
-        const { expected } = statistics.significantHeightM;
-        Object.assign(cascade.statistics, statistics, {
-          significantHeightM: { ...cascade.statistics.significantHeightM, expected },
-        });
-      });
-      bake.manifest.statistics.significantHeightM.expected = twin.statistics.significantHeightM.expected;
-      bake.save();
+      const { planHash, files } = bake.manifest;
+      Object.assign(bake.manifest, structuredClone(twin), { planHash, files });
+      bake.restate();
     },
     failing: ['direction', 'spot'],
   },
@@ -513,7 +538,7 @@ export const SPOILERS: readonly Spoiler[] = [
       bake.manifest.sea.water.depthM = (bake.manifest.sea.water.depthM as number) / 2;
       bake.save();
     },
-    failing: ['waves', 'dispersion', 'horizontal', 'derivatives', 'spot'],
+    failing: ['sea', 'waves', 'dispersion', 'horizontal', 'derivatives', 'spot'],
   },
   {
     name: 'another seed in the manifest',
@@ -533,12 +558,20 @@ export const SPOILERS: readonly Spoiler[] = [
     failing: ['figures'],
   },
   {
+    name: 'a height of a wave system changed',
+    spoil(bake) {
+      bake.manifest.sea.systems[0].significantHeightM *= 1.01;
+      bake.save();
+    },
+    failing: ['sea'],
+  },
+  {
     name: 'a higher sea expected',
     spoil(bake) {
       bake.manifest.cascades[0].statistics.significantHeightM.expected *= 1.001;
       bake.save();
     },
-    failing: ['waves', 'heights'],
+    failing: ['sea', 'waves', 'heights'],
   },
   {
     name: 'half the coverage asked for',

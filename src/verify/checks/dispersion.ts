@@ -1,5 +1,5 @@
 import type { Check } from '../check.ts';
-import { engineNoise } from '../rounding.ts';
+import { engineNoise, LARGEST_IN_DEVIATIONS } from '../rounding.ts';
 import { FLAT, notApplicable, verdict } from '../verdict.ts';
 
 /**
@@ -12,7 +12,7 @@ export const DISPERSION: Check = {
   question: 'Does every wave move at the speed of its length, depth and current?',
   quick: false,
   begin({ manifest }) {
-    const engine = engineNoise(manifest.generator.engine);
+    const engine = LARGEST_IN_DEVIATIONS * engineNoise(manifest.generator.engine);
     return {
       cascade() {
         return {

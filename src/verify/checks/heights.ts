@@ -3,7 +3,7 @@ import type { CascadeFacts } from '../cascade-facts.ts';
 import { exponentialSumBounds, FALSE_ALARM_RATE } from '../chance.ts';
 import type { Check } from '../check.ts';
 import { isStanding, type MeasuredWaves } from '../measured-waves.ts';
-import { engineNoise } from '../rounding.ts';
+import { engineNoise, LARGEST_IN_DEVIATIONS } from '../rounding.ts';
 import { answering, notApplicable, type Verdict, verdict } from '../verdict.ts';
 
 /**
@@ -67,7 +67,7 @@ function cascadeHeight(facts: CascadeFacts, waves: MeasuredWaves): CascadeHeight
   const samples = frameCount * facts.cascade.resolution ** 2;
   const error = rounding + 2 * DEVIATIONS * Math.sqrt((FLOAT_KURTOSIS * variance * rounding) / samples);
   const clipped = clippedVariance(facts, variance);
-  const engine = 2 * engineNoise(facts.manifest.generator.engine) + SUMMATION;
+  const engine = 2 * LARGEST_IN_DEVIATIONS * engineNoise(facts.manifest.generator.engine) + SUMMATION;
   const height = { variance, rounding: error + clipped + engine * variance };
   if (shaping.matchHeight) return { ...height, chance: [], standing: 0 };
   const target = facts.target().variance;

@@ -114,8 +114,8 @@ function spot(
   engine: number,
 ): Spot {
   const stored = field.values[texel];
-  // The transforms' own noise goes with the size of the whole field.
-  const noise = engine * (Math.abs(exact) + field.channel.written.deviation);
+  // The transforms' own noise goes with the largest field of its kind.
+  const noise = engine * field.size;
   const share = shareOfRounding(field, exact, stored, noise);
   const place = `frame ${frameNumber}, texel ${texel % N} east, ${Math.floor(texel / N)} north`;
   return { share, sentence: `${field.quantity} at ${place}: ${stored} stored, ${exact} by the sum` };
