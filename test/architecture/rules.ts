@@ -39,6 +39,7 @@ const ROWS: Readonly<Record<string, readonly string[]>> = {
     'sea',
     'waves',
     'image',
+    'physics',
     'math',
     'errors.ts',
     'hash.ts',
