@@ -1,7 +1,7 @@
 import { InternalError } from '../errors.ts';
 import type { Float32Engine } from '../field/float32-engine.ts';
 import { UNITS_PER_SI } from '../maps/encoded-map.ts';
-import { largestMagnitudes, sampledMaps } from '../maps/sampled-map.ts';
+import { jacobianCodesRequest, largestMagnitudes, sampledMaps } from '../maps/sampled-map.ts';
 import type { CascadeFoam } from '../plan/plan.ts';
 import type { CascadeMaker, MakerParts } from './cascade-maker.ts';
 
@@ -33,15 +33,8 @@ export function float32Maker(
       return channels.map(({ unit }, c) => largest[c] * UNITS_PER_SI[unit]);
     },
     jacobianCodes() {
-      const { zeroJ, stepJ } = (cascade.foam as CascadeFoam).jacobianCodes;
-      const [[{ finite }]] = surface.samples([
-        {
-          sample: 'uint16',
-          rowZero: 'south',
-          target: { planes: [codes] },
-          channels: [{ value: 'jacobian', gain: 1 / stepJ, shift: -zeroJ / stepJ, dither: null }],
-        },
-      ]);
+      const { jacobianCodes } = cascade.foam as CascadeFoam;
+      const [[{ finite }]] = surface.samples([jacobianCodesRequest(codes, jacobianCodes)]);
       if (!finite) throw new InternalError('the Jacobian is not a number somewhere on the tile');
       return codes;
     },
