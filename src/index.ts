@@ -3,6 +3,7 @@
 export { bake } from './bake/bake.ts';
 export { gather } from './bake/gather.ts';
 export { machineThreads } from './bake/machine.ts';
+export { frameRuns } from './bake/missing.ts';
 export {
   BAKE_DEFAULTS,
   type BakeOptions,
@@ -18,6 +19,13 @@ export {
 } from './bake/options.ts';
 export { expectedMemoryBytes } from './bake/resources.ts';
 export type { RunReport } from './bake/run-report.ts';
+export {
+  type BakeStatus,
+  bakeStatus,
+  type CascadeStatus,
+  type ProcessStatus,
+  type Progress,
+} from './bake/status.ts';
 export { surveyedBake } from './bake/survey.ts';
 export {
   CannotCreateError,
@@ -32,6 +40,10 @@ export {
   UnavailableError,
   UsageError,
 } from './errors.ts';
+export { FARM_DEFAULTS, type FarmFile, type FarmJob, type FarmRequest, farmJob } from './farm/farm-job.ts';
+export { commandText } from './farm/shell.ts';
+export { slurmScripts } from './farm/slurm.ts';
+export { FARM_TEMPLATES, type FarmTemplate, farmTemplate } from './farm/templates.ts';
 export type { ChannelSpec, Decode, Quantity, SampleType, Unit } from './image/image.ts';
 export { manifestJsonSchema } from './manifest/json-schema.ts';
 export type {

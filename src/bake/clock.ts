@@ -8,6 +8,11 @@ export function dateNow(): string {
   return new Date().toISOString();
 }
 
+/** Now, as the stamps of files have it. */
+export function millisecondsSince1970(): number {
+  return Date.now();
+}
+
 /** Lets what waits in this thread, signals and timers too, have its turn. */
 export function otherTurns(): Promise<void> {
   return new Promise((resolve) => setImmediate(resolve));

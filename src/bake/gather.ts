@@ -1,5 +1,4 @@
 import { resolve } from 'node:path';
-import { InputError, type InputProblem } from '../errors.ts';
 import type { Manifest } from '../manifest/manifest.ts';
 import type { Plan } from '../plan/plan.ts';
 import { concluded, type Run, unlessFinishedElsewhere } from './conclusion.ts';
@@ -8,9 +7,9 @@ import { finishBake } from './finish.ts';
 import { takeStock } from './finished-work.ts';
 import { findLevels, makeFoam } from './foam-stage.ts';
 import type { FrameEntry } from './journal-entry.ts';
-import { missingFrames, missingFramesError } from './missing.ts';
+import { damagedError, missingFrames, missingFramesError, noBakeError, unresolvedError } from './missing.ts';
 import { type BakeResult, type GatherOptions, type Part, requirePart, threadCount } from './options.ts';
-import { isCodesPath, MANIFEST_PATH, PLAN_PATH } from './paths.ts';
+import { isCodesPath } from './paths.ts';
 import { damagedFiles } from './repair.ts';
 import { runTally } from './run-report.ts';
 import { foamRun } from './shard.ts';
@@ -78,38 +77,5 @@ function ofPart(plan: Plan, frames: readonly FrameEntry[], part: Part): readonly
     }
     const [from, to] = foamRun(plan.cascades[entry.cascade].loop.frameCount, part);
     return entry.frame >= from && entry.frame < to ? [entry] : [];
-  });
-}
-
-function folderError(
-  folder: string,
-  problem: Pick<InputProblem, 'expected' | 'found' | 'remedy'>,
-): InputError {
-  return new InputError(folder, [{ path: '', line: 0, column: 0, ...problem }]);
-}
-
-function noBakeError(folder: string): InputError {
-  return folderError(folder, {
-    expected: 'the folder of a bake',
-    found: `neither ${MANIFEST_PATH} nor ${PLAN_PATH}`,
-    remedy: 'Give the folder that the shards were baked into.',
-  });
-}
-
-function unresolvedError(folder: string): InputError {
-  return folderError(folder, {
-    expected: `all ranges known in ${PLAN_PATH}`,
-    found: 'a range that is still to be surveyed',
-    remedy: 'The plan was not written by a bake: plan the sea anew and bake it.',
-  });
-}
-
-function damagedError(folder: string, damaged: readonly string[]): InputError {
-  const more = damaged.length > 3 ? ` and ${damaged.length - 3} more` : '';
-  return folderError(folder, {
-    expected: 'the files that its manifest names',
-    found: `${damaged.length} missing or damaged: ${damaged.slice(0, 3).join(', ')}${more}`,
-    remedy:
-      'Run the bake of its sea or saved plan again with the same folder: it makes only what is damaged.',
   });
 }

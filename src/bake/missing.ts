@@ -1,8 +1,9 @@
 import { InputError, type InputProblem } from '../errors.ts';
+import { quoted } from '../farm/shell.ts';
 import type { Plan } from '../plan/plan.ts';
 import type { FinishedWork } from './finished-work.ts';
 import type { FrameId } from './jobs.ts';
-import { PLAN_PATH } from './paths.ts';
+import { MANIFEST_PATH, PLAN_PATH } from './paths.ts';
 import { wantedFrames } from './shard.ts';
 
 /** Frames of a plan that are not finished. */
@@ -59,7 +60,38 @@ export function frameRuns(sorted: readonly number[]): string {
 
 const MOST_RUNS = 12;
 
-/** An argument as a shell takes it. */
-export function quoted(argument: string): string {
-  return /^[A-Za-z0-9_./:@%+=,-]+$/.test(argument) ? argument : `'${argument.replaceAll("'", "'\\''")}'`;
+function folderError(
+  folder: string,
+  problem: Pick<InputProblem, 'expected' | 'found' | 'remedy'>,
+): InputError {
+  return new InputError(folder, [{ path: '', line: 0, column: 0, ...problem }]);
+}
+
+/** @returns the error of a folder without a bake */
+export function noBakeError(folder: string): InputError {
+  return folderError(folder, {
+    expected: 'the folder of a bake',
+    found: `neither ${MANIFEST_PATH} nor ${PLAN_PATH}`,
+    remedy: 'Give the folder that the shards were baked into.',
+  });
+}
+
+/** @returns the error of a plan that no bake can have written */
+export function unresolvedError(folder: string): InputError {
+  return folderError(folder, {
+    expected: `all ranges known in ${PLAN_PATH}`,
+    found: 'a range that is still to be surveyed',
+    remedy: 'The plan was not written by a bake: plan the sea anew and bake it.',
+  });
+}
+
+/** The error that names damaged files of a finished bake. */
+export function damagedError(folder: string, damaged: readonly string[]): InputError {
+  const more = damaged.length > 3 ? ` and ${damaged.length - 3} more` : '';
+  return folderError(folder, {
+    expected: 'the files that its manifest names',
+    found: `${damaged.length} missing or damaged: ${damaged.slice(0, 3).join(', ')}${more}`,
+    remedy:
+      'Run the bake of its sea or saved plan again with the same folder: it makes only what is damaged.',
+  });
 }

@@ -10,6 +10,14 @@ export interface ProgramIo {
   /** Messages and progress. */
   readonly stderr: OutputStream;
   readonly env: Readonly<Record<string, string | undefined>>;
+  /** Words that start this program again: for what others are to run. */
+  readonly program: readonly string[];
+  /** Runs a program to its end: its exit status, null where it cannot be run, and what it said. */
+  readonly runProgram: (command: string) => {
+    readonly status: number | null;
+    readonly stdout: string;
+    readonly stderr: string;
+  };
   /** A clock that only goes forward, s. */
   readonly secondsNow: () => number;
   /** Calls back at each SIGINT and SIGTERM, instead of what the system would do; returns what ends that. */

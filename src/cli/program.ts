@@ -46,6 +46,12 @@ const COMMANDS: readonly CommandEntry[] = [
     load: async () => (await import('./sheet-command.ts')).defineSheetCommand,
   },
   {
+    name: 'farm',
+    summary: 'Write the scripts of a bake on many machines, or show how far it is.',
+    usage: 'slurm|template|status',
+    load: async () => (await import('./farm-command.ts')).defineFarmCommand,
+  },
+  {
     name: 'presets',
     summary: 'List the included seas, or print one to start from.',
     usage: '[name]',

@@ -23,6 +23,8 @@ export interface WriteOptions {
   readonly sync?: boolean;
   /** Make missing folders. Default true; false where a missing folder means that somebody took it away. */
   readonly makeFolders?: boolean;
+  /** Whether the file may be run as a program. Default false. */
+  readonly executable?: boolean;
 }
 
 /**
@@ -81,7 +83,7 @@ function placeFile(
   folder: string,
   relativePath: string,
   bytes: Uint8Array | string,
-  { sync = false, makeFolders = true }: WriteOptions,
+  { sync = false, makeFolders = true, executable = false }: WriteOptions,
   place: (temporary: string, path: string) => boolean,
 ): boolean {
   const path = insidePath(folder, relativePath);
@@ -91,7 +93,7 @@ function placeFile(
   let action: FileAction = 'create';
   try {
     if (makeFolders) makeFolder(parent);
-    const file = openSync(temporary, 'wx');
+    const file = openSync(temporary, 'wx', executable ? 0o777 : 0o666);
     try {
       action = 'write';
       writeWhole(file, data);

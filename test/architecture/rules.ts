@@ -28,7 +28,10 @@ const ROWS: Readonly<Record<string, readonly string[]>> = {
   codec: ['image', 'math', 'kernel', 'errors.ts'],
   store: ['errors.ts', 'hash.ts'],
   manifest: ['sea', 'plan', 'spectrum', 'image', 'errors.ts'],
+  // Text for schedulers: it starts nothing and writes nothing.
+  farm: ['plan', 'errors.ts', 'version.ts'],
   bake: [
+    'farm',
     'manifest',
     'store',
     'codec',
@@ -62,6 +65,7 @@ const ROWS: Readonly<Record<string, readonly string[]>> = {
   ],
   report: ['verify', 'manifest', 'image', 'codec', 'store', 'math', 'errors.ts', 'version.ts'],
   'index.ts': [
+    'farm',
     'report',
     'verify',
     'bake',
@@ -97,6 +101,7 @@ const DOORS: Readonly<Record<string, readonly string[]>> = {
   'node:worker_threads': ['bake/thread-executor.ts', 'bake/worker.ts'],
   'node:zlib': ['codec/'],
   'node:crypto': ['hash.ts'],
+  'node:child_process': ['cli/'],
   'node:os': ['store/', 'bake/machine.ts'],
 };
 

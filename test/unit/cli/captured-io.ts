@@ -33,6 +33,8 @@ export interface CapturedOptions {
   readonly stdout?: OutputStream & { readonly text: string };
   readonly stderr?: OutputStream & { readonly text: string };
   readonly env?: ProgramIo['env'];
+  /** What a program that is run answers; default: there is none. */
+  readonly runProgram?: ProgramIo['runProgram'];
   /** Called for the time, s; default a clock that stands still. */
   readonly secondsNow?: () => number;
 }
@@ -54,6 +56,8 @@ export function capturedIo(options: CapturedOptions = {}): CapturedIo {
     stdout: options.stdout ?? new CapturedStream(),
     stderr: options.stderr ?? new CapturedStream(),
     env: options.env ?? {},
+    program: ['loopswell'],
+    runProgram: options.runProgram ?? (() => ({ status: null, stdout: '', stderr: '' })),
     secondsNow: options.secondsNow ?? (() => 0),
     onStopSignal(listener) {
       listeners.add(listener);
