@@ -1,5 +1,14 @@
 import { type ChildProcess, spawn, spawnSync } from 'node:child_process';
-import { chmodSync, existsSync, mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import {
+  chmodSync,
+  existsSync,
+  mkdirSync,
+  mkdtempSync,
+  readdirSync,
+  readFileSync,
+  rmSync,
+  writeFileSync,
+} from 'node:fs';
 import { createServer } from 'node:net';
 import { hostname, tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -125,35 +134,36 @@ function startMunge(): ChildProcess[] {
   return [spawn('setpriv', [...user, 'munged', '--foreground'], { stdio: 'ignore' })];
 }
 
-/** A node's daemon and every process below it: steps, shells, programs. */
+/** A node's daemon, its steps (which leave it) and everything they run: known by the node's name in their environment. */
 function processesOf(daemon: string, folder: string, node: string): number[] {
-  const lines = spawnSync('ps', ['-eo', 'pid=,ppid=,args='], { encoding: 'utf8' }).stdout.trim().split('\n');
-  const processes = lines.map((line) => {
-    const [, pid, parent, args] = /^\s*(\d+)\s+(\d+)\s+(.*)$/.exec(line) ?? [];
-    return { pid: Number(pid), parent: Number(parent), args };
+  const pids = readdirSync('/proc')
+    .filter((name) => /^\d+$/.test(name))
+    .map(Number);
+  const own = pids.filter((pid) => {
+    const environment = environmentOf(pid);
+    return environment.includes(`SLURMD_NODENAME=${node}\0`) && environment.includes(folder);
   });
-  // Steps leave their daemon: they are known by the folder and name of the node in their environment.
-  const steps = processes.filter(
-    ({ pid, args }) =>
-      args.startsWith('slurmstepd') && environmentOf(pid).includes(`SLURMD_NODENAME=${node}\0`),
-  );
-  const own = new Set([Number(daemon), ...steps.map(({ pid }) => pid)]);
-  for (let grown = true; grown; ) {
-    grown = false;
-    for (const { pid, parent } of processes) {
-      const isOwn = own.has(parent) || environmentOf(pid).includes(`SLURMD_NODENAME=${node}\0`);
-      if (!own.has(pid) && isOwn && environmentOf(pid).includes(folder)) {
-        own.add(pid);
-        grown = true;
-      }
-    }
-  }
-  return [...own];
+  const steps = pids.filter((pid) => commandOf(pid).startsWith('slurmstepd') && parentsOf(own).has(pid));
+  return [...new Set([Number(daemon), ...steps, ...own])];
+}
+
+/** The processes that started some processes. */
+function parentsOf(pids: readonly number[]): Set<number> {
+  return new Set(pids.map((pid) => Number(/^PPid:\s*(\d+)$/m.exec(procText(pid, 'status'))?.[1])));
+}
+
+function commandOf(pid: number): string {
+  return procText(pid, 'cmdline');
 }
 
 function environmentOf(pid: number): string {
+  return procText(pid, 'environ');
+}
+
+/** A text about a process; empty where it has ended meanwhile. */
+function procText(pid: number, name: string): string {
   try {
-    return readFileSync(`/proc/${pid}/environ`, 'utf8');
+    return readFileSync(`/proc/${pid}/${name}`, 'utf8');
   } catch {
     return '';
   }
