@@ -72,7 +72,8 @@ describe.each(SPECTRUM_FORMS)('%s', (form) => {
   it('meets a stated height', () => {
     fc.assert(
       fc.property(cases(form), between(0.01, 20), ([parameters, water], height) => {
-        fc.pre(spectralMoment(frequencySpectrum(parameters, water), 0) > 0);
+        // The last digits of the smallest doubles are no energy.
+        fc.pre(spectralMoment(frequencySpectrum(parameters, water), 0) > 1e-250);
         const stated = withSignificantHeight(parameters, water, height);
         expectRelative(significantHeight(frequencySpectrum(stated, water)), height, MOMENT, 'Hs');
       }),
