@@ -21,14 +21,22 @@ export function channelTallier(): ChannelTallier {
   let [count, total, totalSquares, min, max, extremes] = [0, 0, 0, Infinity, -Infinity, 0];
   return {
     add(field) {
-      let [sum, squares] = [0, 0];
-      for (const value of field.values) {
+      const { values } = field;
+      // Local, as writing to captured variables in the loop takes twice as long.
+      let sum = 0;
+      let squares = 0;
+      let least = min;
+      let most = max;
+      for (let i = 0; i < values.length; i++) {
+        const value = values[i];
         sum += value;
         squares += value * value;
-        if (value < min) min = value;
-        if (value > max) max = value;
+        if (value < least) least = value;
+        if (value > most) most = value;
       }
-      count += field.values.length;
+      min = least;
+      max = most;
+      count += values.length;
       total += sum;
       totalSquares += squares;
       extremes += field.extremes;

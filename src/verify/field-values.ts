@@ -125,11 +125,10 @@ function fillValues(
   }
   const largest = LARGEST_CODE[sample];
   const step = scale / largest;
-  let extremes = 0;
-  for (let i = 0; i < plane.length; i++) {
-    if (plane[i] === 0 || plane[i] === largest) extremes++;
-    values[i] = plane[i] * step + offset;
-  }
+  const extremes =
+    sample === 'uint8'
+      ? fillFromBytes(values, plane as Uint8Array, step, offset)
+      : fillFromWords(values, plane as Uint16Array, step, offset);
   const size = Math.abs(step);
   const codes = {
     sample,
@@ -148,6 +147,28 @@ function fillValues(
     high: Math.max(offset, offset + scale),
     clipping,
   };
+}
+
+/** Fills values of 8-bit codes; returns how many are at an end. One loop a type: a loop over both is half as fast. */
+function fillFromBytes(values: Float64Array, codes: Uint8Array, step: number, offset: number): number {
+  let extremes = 0;
+  for (let i = 0; i < codes.length; i++) {
+    const code = codes[i];
+    if (code === 0 || code === 255) extremes++;
+    values[i] = code * step + offset;
+  }
+  return extremes;
+}
+
+/** The same of 16-bit codes. */
+function fillFromWords(values: Float64Array, codes: Uint16Array, step: number, offset: number): number {
+  let extremes = 0;
+  for (let i = 0; i < codes.length; i++) {
+    const code = codes[i];
+    if (code === 0 || code === 65535) extremes++;
+    values[i] = code * step + offset;
+  }
+  return extremes;
 }
 
 /** Turns the order of the rows round, in place. */

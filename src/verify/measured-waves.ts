@@ -112,10 +112,14 @@ export function waveProjection(
     add(index, { values, rounding: { meanSquare, clipping } }) {
       frames++;
       rounding += meanSquare + clipping;
-      for (const value of values) {
-        sum += value;
-        squares += value * value;
+      let frameSum = 0;
+      let frameSquares = 0;
+      for (let i = 0; i < values.length; i++) {
+        frameSum += values[i];
+        frameSquares += values[i] * values[i];
       }
+      sum += frameSum;
+      squares += frameSquares;
       if (waitingIndex < 0) {
         waiting.set(values);
         waitingIndex = index;

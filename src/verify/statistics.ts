@@ -14,6 +14,7 @@ import { STRONGEST_WHITECAP_WIND_MPS, whitecapCoverage } from '../physics/whitec
 import { windSpeedAtHeight } from '../physics/wind.ts';
 import type { BakeFacts } from './bake-facts.ts';
 import type { CascadeFacts } from './cascade-facts.ts';
+import { channelTallier } from './channel-tally.ts';
 import type { SeenLoop } from './check.ts';
 import { siPerUnit } from './field-values.ts';
 import { type FoldWatch, foldedShareOfSum, foldWatch } from './folding.ts';
@@ -105,15 +106,14 @@ export function statisticsWatch(bake: BakeFacts): StatisticsWatch {
   return {
     cascade(facts) {
       let heights = NO_VALUES;
-      let [foam, foamTexels] = [0, 0];
+      const foam = channelTallier();
       const folds = foldWatch(facts);
       return {
         frame(frame) {
           const height = heightOf(frame);
           if (height !== null) heights = mergedPowerSums(heights, powerSums(height.values));
-          const values = frame.field('foam')?.values ?? [];
-          for (const value of values) foam += value;
-          foamTexels += values.length;
+          const field = frame.field('foam');
+          if (field !== null) foam.add(field);
         },
         keyedFrame(frame) {
           const surface = facts.surface(frame);
@@ -125,7 +125,7 @@ export function statisticsWatch(bake: BakeFacts): StatisticsWatch {
             heights,
             moments: waves === null ? null : waveMoments(waves, windToward),
             folds,
-            foamCoverage: foamTexels === 0 ? null : foam / foamTexels,
+            foamCoverage: foam.tally().count === 0 ? null : foam.tally().mean,
           });
         },
       };

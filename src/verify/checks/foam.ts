@@ -1,6 +1,7 @@
 import type { ManifestFoam } from '../../manifest/manifest.ts';
 import { JACOBIAN_RANGE_SIGMAS } from '../../plan/encodings.ts';
 import type { CascadeFacts } from '../cascade-facts.ts';
+import { channelTallier } from '../channel-tally.ts';
 import type { CascadeInspection, Check } from '../check.ts';
 import type { FieldValues } from '../field-values.ts';
 import { type FoamLaw, foamLaw } from '../foam-law.ts';
@@ -43,18 +44,13 @@ function foamInspection(facts: CascadeFacts, foam: ManifestFoam, residue: string
   const beforeKeyed = new Map<number, Float32Array>();
   const source = residual(facts.manifest.generator.engine);
   const correlation = correlationSums();
-  let [sum, texels, lowest, highest] = [0, 0, Infinity, -Infinity];
+  const tallier = channelTallier();
   return {
     frame(frame) {
       const field = frame.field('foam');
       if (field === null) return;
       decay.add(frame.index, field);
-      for (const value of field.values) {
-        sum += value;
-        if (value < lowest) lowest = value;
-        if (value > highest) highest = value;
-      }
-      texels += field.values.length;
+      tallier.add(field);
       const next = (frame.index + 1) % frameCount;
       if (facts.keyedFrames.includes(next)) beforeKeyed.set(next, Float32Array.from(field.values));
     },
@@ -76,13 +72,14 @@ function foamInspection(facts: CascadeFacts, foam: ManifestFoam, residue: string
       );
     },
     verdicts() {
-      if (texels === 0) return [notApplicable('no foam map was there to be read')];
+      const { count, min, max, mean } = tallier.tally();
+      if (count === 0) return [notApplicable('no foam map was there to be read')];
       const rows: Verdict[] = [];
       const whole = decay.frames() === frameCount;
       rows.push(whole ? decay.verdict() : notApplicable('not every frame of the loop was there to be read'));
-      rows.push(answering('Does foam lie between 0 and 1?', rangeVerdict(lowest, highest)));
+      rows.push(answering('Does foam lie between 0 and 1?', rangeVerdict(min, max)));
       const coverage = whole
-        ? coverageVerdict(foam, sum / texels)
+        ? coverageVerdict(foam, mean)
         : notApplicable('not every frame of the loop was there to be read');
       rows.push(answering('Does it cover what it was asked to cover?', coverage));
       const noSurface = notApplicable('no map that holds the height to be read');
