@@ -41,7 +41,7 @@ export function chunk(type: string, data: Uint8Array): Uint8Array {
   const bytes = new Uint8Array(12 + data.length);
   const numbers = new DataView(bytes.buffer);
   numbers.setUint32(0, data.length);
-  bytes.set(encoder.encode(type), 4);
+  for (let i = 0; i < 4; i++) bytes[4 + i] = type.charCodeAt(i);
   bytes.set(data, 8);
   numbers.setUint32(8 + data.length, crc32(bytes.subarray(4, 8 + data.length)));
   return bytes;
@@ -60,13 +60,13 @@ export function headerChunk(header: ImageHeader): Uint8Array {
 
 /** A text under a keyword: tEXt where Latin-1 can say it, else iTXt (uncompressed, language and translation empty). */
 export function textChunk(keyword: string, text: string): Uint8Array {
-  const latin1 = [...text].every((character) => character <= '\u00ff');
-  if (latin1)
-    return chunk(
-      'tEXt',
-      Uint8Array.from(`${keyword}\0${text}`, (c) => c.charCodeAt(0)),
-    );
+  if (isLatin1(text)) return chunk('tEXt', Buffer.from(`${keyword}\0${text}`, 'latin1'));
   return chunk('iTXt', encoder.encode(`${keyword}\0\0\0\0\0${text}`));
+}
+
+function isLatin1(text: string): boolean {
+  for (let i = 0; i < text.length; i++) if (text.charCodeAt(i) > 0xff) return false;
+  return true;
 }
 
 /** Keyword and text of a tEXt or uncompressed iTXt chunk; null for any other. */

@@ -142,11 +142,16 @@ function isNoise(from: usize, to: usize): bool {
   return coincidences * 25600 < n * (n - 1) * 103;
 }
 
+/** Bits that a block of these bytes would take, in whichever way is shortest. */
+export function leastBits(from: usize, to: usize): usize {
+  return min(blockBits(from, to), storedBits(to - from));
+}
+
 /**
  * Finds the runs of a block and makes codes for it.
  * @returns bits that the block will take; close, where only a part was counted
  */
-export function blockBits(from: usize, to: usize): usize {
+function blockBits(from: usize, to: usize): usize {
   const bytes = to - from;
   const repeated = findRuns(from, to);
   if (repeated * BYTES_PER_RUN_BYTE >= bytes) return codedBits(countSequences(RUN_SEQUENCES, from), bytes);

@@ -1,4 +1,4 @@
-import { ANY, blockBits } from './deflate';
+import { ANY, leastBits } from './deflate';
 import { AVERAGE, fillFilteredRow, NONE, PAETH, SUB, UP } from './png-filter';
 import { fillRow, fillSampleLists } from './png-rows';
 import { LARGEST_BLOCK } from './workspace';
@@ -93,7 +93,7 @@ export function beginPixels(at: usize): usize {
 }
 
 function sampledBits(type: usize): usize {
-  return blockBits(sampleOf(type), sampleOf(type) + sampled);
+  return leastBits(sampleOf(type), sampleOf(type) + sampled);
 }
 
 /** Appends rows: as many as LARGEST_BLOCK holds filtered, or one. */
