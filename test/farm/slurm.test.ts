@@ -104,25 +104,6 @@ describe.skipIf(skipped)(`a bake on Slurm${skipped ? ` (missing here: ${missing.
     });
   });
 
-  it('has the shard of a node that loses power made elsewhere', async () => {
-    await onFarm(async ({ submit, made, finished }) => {
-      const { frames } = await submit(['--tasks', '3'], SLOWLY);
-      await eventually('frames', () => made() >= 6);
-      const victim = cluster
-        .run('squeue', '--noheader', `--jobs=${frames}`, '--states=RUNNING', '--format=%N')
-        .split('\n')[0];
-      expect(NODES).toContain(victim);
-      // The node's daemon, the step, its shell and the program.
-      expect(cluster.cutPower(victim)).toBeGreaterThanOrEqual(4);
-      try {
-        await finished();
-        expect(restartsOf(frames)).toBeGreaterThanOrEqual(1);
-      } finally {
-        await cluster.restore(victim);
-      }
-    });
-  });
-
   it('with a shard that fails leaves the gather cancelled, and a rerun completes', async () => {
     await onFarm(async ({ submit, resubmit, finished, folder, log }) => {
       mkdirSync(join(folder, 'c0/normal.0005.png/x'), { recursive: true });
