@@ -74,6 +74,11 @@ export const BYTE_SCENES: Readonly<Record<string, (length: number) => Uint8Array
     Uint8Array.from({ length }, (_, i) => (scattered(i >> 7) < 0.9 ? 0 : 60 + 40 * scattered(i))),
   repeats,
   'all bytes but one': (length) => Uint8Array.from({ length }, (_, i) => 255 * scattered(i)),
+  'residues, zeros at the end': (length) => {
+    const bytes = residues(length, 12);
+    bytes.fill(0, Math.floor(0.8 * length));
+    return bytes;
+  },
   'zeros, noise at the end': (length) =>
     Uint8Array.from({ length }, (_, i) => (i < 0.7 * length ? 0 : 256 * scattered(i))),
 };

@@ -1,5 +1,5 @@
 import { beginByteCounts, countBytes, endByteCounts } from './byte-counts';
-import { DISTANCE_COUNTS, LITERAL_COUNTS } from './workspace';
+import { DISTANCE_COUNTS, END_OF_BLOCK, LITERAL_COUNTS } from './workspace';
 
 /*
  * A block seen as sequences: some bytes as they are ("literals"), then a match, a repeat of earlier bytes; the last
@@ -37,8 +37,7 @@ export function distanceOf(sequence: usize): usize {
  * @returns bits beside the codes: the extra bits of lengths and distances
  */
 export function countSequences(sequences: usize, from: usize): usize {
-  memory.fill(LITERAL_COUNTS + 1024, 0, 4 * 32);
-  memory.fill(DISTANCE_COUNTS, 0, 4 * 32);
+  clearSymbolCounts();
   beginByteCounts();
   let extraBits: usize = 0;
   for (let s = sequences; ; s += 8) {
@@ -53,8 +52,14 @@ export function countSequences(sequences: usize, from: usize): usize {
     extraBits += lengthExtraBits(length) + distanceExtraBits(distance);
   }
   endByteCounts(1);
-  store<u32>(LITERAL_COUNTS + 1024, 1);
   return extraBits;
+}
+
+/** Counts of a block without matches, but for its bytes: one end of block, no lengths, no distances. */
+export function clearSymbolCounts(): void {
+  memory.fill(LITERAL_COUNTS + 4 * END_OF_BLOCK, 0, 4 * 32);
+  memory.fill(DISTANCE_COUNTS, 0, 4 * 32);
+  store<u32>(LITERAL_COUNTS + 4 * END_OF_BLOCK, 1);
 }
 
 function increment(counts: usize, symbol: usize): void {

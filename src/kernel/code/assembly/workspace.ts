@@ -30,8 +30,8 @@ export const DISTANCE_CODES: usize = LITERAL_CODES + 4 * 288;
 export const HEADER_CODES: usize = DISTANCE_CODES + 4 * 32;
 
 /** u8[320] twice: the lengths of both alphabets, kept while others are tried. */
-export const SAVED_LENGTHS: usize = HEADER_CODES + 4 * 32;
-export const SPARE_LENGTHS: usize = SAVED_LENGTHS + 320;
+export const KEPT_LENGTHS: usize = HEADER_CODES + 4 * 32;
+export const SPARE_LENGTHS: usize = KEPT_LENGTHS + 320;
 
 /** u16[320]: the code lengths of a block in the symbols of the header alphabet, with their extra bits. */
 export const HEADER_TOKENS: usize = SPARE_LENGTHS + 320;
@@ -64,7 +64,7 @@ export const PLACES: usize = 0x51000;
 /** u64[16384]: a block of at most SEARCHED_BLOCK bytes as sequences with matches, see sequences.ts. */
 export const MATCH_SEQUENCES: usize = 0x71000;
 
-/** u64[43692]: a block of at most LARGEST_BLOCK bytes as sequences with runs: one for every 6 bytes, and the last. */
+/** u64[14565]: a block of at most LARGEST_BLOCK bytes as sequences with runs: one for every 9 bytes, and the last. */
 export const RUN_SEQUENCES: usize = 0x91000;
 
 /**
@@ -76,4 +76,4 @@ export const LARGEST_BLOCK: usize = 0x20000;
 export const SEARCHED_BLOCK: usize = 0x10000;
 
 /** Bytes of memory that the coder keeps for itself. */
-export const WORKSPACE_BYTES: usize = 0xf0000;
+export const WORKSPACE_BYTES: usize = 0xb0000;

@@ -101,6 +101,10 @@ describeKernel('code', 'blocks', () => {
     // 255 of 256 bytes are log2(256/255) = 0.07 % shorter at best, and their collisions 1/255: taken for noise.
     const near = readDeflateStream(kernelStream(BYTE_SCENES['all bytes but one'](60_000), 'perhaps noise'));
     expect(only(near.blocks).type).toBe('stored');
+    // A zero in 25 bytes more: 1 % shorter by codes.
+    const tinted = BYTE_SCENES.noise(60_000).map((byte, i) => (scattered(i + 7) < 0.04 ? 0 : byte));
+    const { blocks: tintedBlocks } = readDeflateStream(kernelStream(tinted, 'perhaps noise'));
+    expect(only(tintedBlocks).type).toBe('dynamic');
     for (const name of ['noise and residues by turns', 'large residues']) {
       const { blocks } = readDeflateStream(kernelStream(BYTE_SCENES[name](60_000), 'perhaps noise'));
       expect(only(blocks).type, name).toBe('dynamic');
