@@ -3,7 +3,7 @@ import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { fileHashes, inTemporaryFolder } from '../support/bakes.ts';
 import { runProgram, seaFile } from '../support/built.ts';
-import { type Cluster, eventually, missingForSlurm, NODES, startCluster } from '../support/slurm.ts';
+import { type Cluster, eventually, missingForSlurm, startCluster } from '../support/slurm.ts';
 
 // A real Slurm, started by the test itself: three nodes on this machine. Its scripts are those that ship.
 

@@ -28,7 +28,7 @@ export function seaImages(N: number): Readonly<Record<string, Image>> {
   const surface = float32Engine().synthesis(waves, { depthM: Infinity, horizontalScale: 1, fields: FIELDS });
   surface.turnTo(0);
   const [rough] = images(N, ['height'], 'float', { scale: 1, offset: 0 });
-  const heights = rough().planes[0];
+  const heights = Float64Array.from(rough().planes[0]);
   const sigma = Math.sqrt(heights.reduce((sum, h) => sum + h * h, 0) / heights.length);
   const moved = ['displacement-east', 'displacement-north', 'displacement-up'] as const;
   const centred = { scale: 12 * sigma, offset: -6 * sigma };
@@ -52,8 +52,15 @@ export function seaImages(N: number): Readonly<Record<string, Image>> {
     decode: ChannelSpec['decode'],
   ): [() => Image] {
     const names = quantities.length === 1 ? ['Y'] : ['R', 'G', 'B'];
-    const channels = quantities.map((quantity, c) => ({ name: names[c], quantity, unit: '1' as const, decode }));
-    return [() => sampledMaps(surface, [{ resolution, sample, channels, rowZero: 'north', dither: null }])[0].image];
+    const channels = quantities.map((quantity, c) => ({
+      name: names[c],
+      quantity,
+      unit: '1' as const,
+      decode,
+    }));
+    return [
+      () => sampledMaps(surface, [{ resolution, sample, channels, rowZero: 'north', dither: null }])[0].image,
+    ];
   }
 }
 
@@ -62,6 +69,11 @@ function foamOf({ width, height, planes: [codes] }: Image): Image {
   const level = codes.slice().sort()[Math.floor(FOAM_SHARE * codes.length)];
   const least = codes.reduce((a, b) => Math.min(a, b), 65_535);
   const foam = Uint8Array.from(codes, (code) => Math.max(0, (255 * (level - code)) / (level - least + 1)));
-  const channel = { name: 'Y', quantity: 'foam' as const, unit: '1' as const, decode: { scale: 1, offset: 0 } };
+  const channel = {
+    name: 'Y',
+    quantity: 'foam' as const,
+    unit: '1' as const,
+    decode: { scale: 1, offset: 0 },
+  };
   return { width, height, sample: 'uint8', channels: [channel], planes: [foam] };
 }
