@@ -67,7 +67,7 @@ export function seaImages(N: number): Readonly<Record<string, Image>> {
 /** Foam where the surface is pressed together most: a share of all texels, the stronger the more it is pressed. */
 function foamOf({ width, height, planes: [codes] }: Image): Image {
   const level = codes.slice().sort()[Math.floor(FOAM_SHARE * codes.length)];
-  const least = codes.reduce((a, b) => Math.min(a, b), 65_535);
+  const least = Float64Array.from(codes).reduce((a, b) => Math.min(a, b), 65_535);
   const foam = Uint8Array.from(codes, (code) => Math.max(0, (255 * (level - code)) / (level - least + 1)));
   const channel = {
     name: 'Y',
