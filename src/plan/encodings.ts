@@ -120,7 +120,10 @@ function channelNames(
     const components = LAYER_COMPONENTS[request.map];
     return components === undefined ? [request.map] : components.map((part) => `${request.map}.${part}`);
   }
-  return oriented.length === 1 ? ['Y'] : ['R', 'G', 'B'].slice(0, oriented.length);
+  if (oriented.length === 1) return ['Y'];
+  // PNG knows two channels only as grey and alpha.
+  if (oriented.length === 2 && request.format === 'png') return ['Y', 'A'];
+  return ['R', 'G', 'B'].slice(0, oriented.length);
 }
 
 function channelUnit(dimension: MapContents['dimension'], output: OutputConventions): Unit {
