@@ -9,6 +9,7 @@ import {
 } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
+import { gather } from '../../../src/bake/gather.ts';
 import { CannotCreateError, InputError, StoppedError, UsageError } from '../../../src/errors.ts';
 import { parseManifest } from '../../../src/manifest/manifest-text.ts';
 import { planBake } from '../../../src/plan/plan-bake.ts';
@@ -197,6 +198,37 @@ describe('a finished file', () => {
       await expect(inlineBake(planned, folder)).rejects.toThrow(
         /c0\/normal\.0002\.png: expected what the manifest/,
       );
+    });
+  });
+});
+
+describe('a damaged manifest', () => {
+  it('that names other files than its maps is told of, and nothing is made or removed', async () => {
+    await inTemporaryFolder(async (folder) => {
+      const { manifest } = await inlineBake(planned, folder);
+      const path = join(folder, 'manifest.json');
+      const files = manifest?.files ?? [];
+      for (const wrong of [
+        { files: files.slice(1) },
+        { files: [...files.slice(1), files[1]] },
+        { files: [...files, { ...files[0], path: 'c0/normal.0009.png' }] },
+        { files: files.map((file, i) => (i === 3 ? { ...file, path: 'notes.txt' } : file)) },
+      ]) {
+        writeFileSync(path, JSON.stringify({ ...manifest, ...wrong }));
+        const before = fileHashes(folder);
+        for (const run of [inlineBake(planned, folder), gather(folder, { threads: 0 })]) {
+          await expect(run).rejects.toThrow(/files: expected the 48 files of its maps/);
+        }
+        expect(fileHashes(folder)).toEqual(before);
+      }
+    });
+  });
+
+  it('is none where a bake was killed before it could tidy up: the next run does', async () => {
+    await inTemporaryFolder(async (folder) => {
+      await inlineBake(planned, folder, { keepScratch: true });
+      expect((await gather(folder, { threads: 0 })).run.bytesWritten).toBe(0);
+      expect(fileHashes(folder)).toEqual(await WHOLE);
     });
   });
 });

@@ -1,4 +1,4 @@
-import { chmodSync, existsSync, mkdirSync, readdirSync, renameSync, rmSync } from 'node:fs';
+import { chmodSync, cpSync, existsSync, mkdirSync, readdirSync, renameSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { jobError, jobFailure } from '../../../src/bake/job-failure.ts';
@@ -122,19 +122,39 @@ it('a finished file that goes away while the bake runs is missed before the mani
   });
 });
 
-it('another process that finishes the same bake meanwhile is no failure', async () => {
-  await inTemporaryFolder(async (folder) => {
-    let other: Promise<unknown> = Promise.resolve();
-    // The other bake begins in the middle of this one, makes what is left, and clears the working files of both.
-    const slow = inlineBake(planned, folder, {
-      onProgress: ({ stage, done }) => {
-        if (stage === 'frames' && done === 3) other = inlineBake(planned, folder);
-      },
+describe('another process that finishes the same bake meanwhile', () => {
+  it('is no failure where it clears the working files away under our feet', async () => {
+    await inTemporaryFolder(async (outer) => {
+      const [folder, other] = [join(outer, 'bake'), join(outer, 'other')];
+      const { manifest } = await inlineBake(planned, other);
+      let finished = false;
+      const result = await inlineBake(planned, folder, {
+        onProgress: ({ stage, done }) => {
+          if (finished || stage !== 'foam' || done < 2) return;
+          finished = true;
+          cpSync(other, folder, { recursive: true });
+          rmSync(join(folder, '.loopswell'), { recursive: true });
+        },
+      });
+      expect(finished).toBe(true);
+      expect(result.manifest).toEqual(manifest);
+      expect(fileHashes(folder)).toEqual(await WHOLE);
     });
-    const { manifest } = await slow;
-    await other;
-    expect(manifest?.planHash).toBe(planned.plan.hash);
-    expect(fileHashes(folder)).toEqual(await WHOLE);
+  });
+
+  it('and this one, both at work at once, make one bake', async () => {
+    await inTemporaryFolder(async (folder) => {
+      let other: Promise<unknown> = Promise.resolve();
+      const slow = inlineBake(planned, folder, {
+        onProgress: ({ stage, done }) => {
+          if (stage === 'frames' && done === 3) other = inlineBake(planned, folder);
+        },
+      });
+      const { manifest } = await slow;
+      await other;
+      expect(manifest?.planHash).toBe(planned.plan.hash);
+      expect(fileHashes(folder)).toEqual(await WHOLE);
+    });
   });
 });
 

@@ -71,6 +71,15 @@ describe('the breaking level', () => {
     expect(level.breakingCode).toBe(12_344);
   });
 
+  it.each([
+    [1.015, null],
+    [1.03, "the written map's steps allow 0.0103 for a target of 0.0100"],
+  ])('may miss the target by 2 %% and no more: steps of %f', async (above, note) => {
+    const meter: CoverageMeter = async (codes) => codes.map((code) => (code < 500 ? 0.004 : 0.01 * above));
+    const level = await levelOfCoverage(0.01, HIGHEST, meter, 1);
+    expect(level).toEqual({ breakingCode: 500, coverage: 0.01 * above, note });
+  });
+
   it('is at the bottom for no foam at all', async () => {
     const { meter, rounds } = counted(() => 1);
     expect(await levelOfCoverage(0, HIGHEST, meter, 1)).toEqual({ breakingCode: 0, coverage: 0, note: null });

@@ -57,6 +57,18 @@ describe('shards', () => {
     );
   });
 
+  it('weigh a frame by its work: one of 2048 texels against many of 256', () => {
+    const some = planOf([
+      { resolution: 2048, frameCount: 1 },
+      { resolution: 256, frameCount: 60 },
+    ]);
+    const [large, small] = some.cascades.map(frameCost);
+    expect(large / small).toBeGreaterThan(64);
+    const counts = [1, 2].map((index) => wantedFrames(some, null, { index, count: 2 }).length);
+    // All the small ones together are less than the large one.
+    expect(counts).toEqual([1, 60]);
+  });
+
   it('cost whole numbers, so that every machine deals alike', () => {
     for (const resolution of [16, 256, 8192]) {
       const [cascade] = planOf([{ resolution, frameCount: 1 }]).cascades;
