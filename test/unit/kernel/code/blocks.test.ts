@@ -120,6 +120,26 @@ describeKernel('code', 'blocks', () => {
     }
   });
 
+  it('are stored where what was counted of them misleads', () => {
+    // Of a long block a sixteenth at each quarter is counted. Here bytes from 128 on are rare there, and all that the
+    // rest has: their codes get 12 bits.
+    const bytes = BYTE_SCENES.noise(131_072).map((byte, i) => {
+      if (i % 32_768 >= 8192) return 128 + (byte >> 1);
+      return i % 64 === 0 ? 128 + ((i >> 6) & 127) : byte >> 1;
+    });
+    const stream = kernelStream(bytes);
+    const read = readDeflateStream(stream);
+    expect(Buffer.compare(read.bytes, bytes)).toBe(0);
+    expect(read.blocks.map(({ type }) => type)).toEqual(['stored', 'stored', 'stored']);
+  });
+
+  it('hold runs behind a long stretch of literals', () => {
+    const bytes = BYTE_SCENES['residues, zeros at the end'](120_000);
+    const { literalCounts, distanceCounts } = only(readDeflateStream(kernelStream(bytes)).blocks);
+    expect(distanceCounts[0]).toBeGreaterThan(24_000 / 258 - 1);
+    expect(literalCounts.slice(0, 256).reduce((sum, count) => sum + count, 0)).toBeLessThan(97_000);
+  });
+
   it('say two distance codes at least, also where there is no match', () => {
     const { blocks } = readDeflateStream(kernelStream(BYTE_SCENES['large residues'](30_000)));
     expect(only(blocks).distanceLengths).toEqual([1, 1]);

@@ -4,6 +4,7 @@ import { exrByKernel } from '../../../../src/codec/exr-kernel-coder.ts';
 import { exrByZlib } from '../../../../src/codec/exr-zlib-coder.ts';
 import type { Plane } from '../../../../src/image/image.ts';
 import { fillHalf } from '../../../../src/math/half.ts';
+import { readDeflateStream } from '../../../support/deflate-blocks.ts';
 import { planeBytes, scattered } from '../../../support/image-scenes.ts';
 import { describeKernel } from '../../../support/kernels.ts';
 
@@ -48,6 +49,8 @@ type Value = (x: number, y: number, c: number) => number;
 const VALUES: Readonly<Record<string, Value>> = {
   waves: (x, y, c) => Math.sin(x / 9 + c) + 0.4 * Math.sin(y / 7 - x / 4) + 0.01 * scattered(x + 999 * y),
   ripples: (x, y, c) => 0.02 * Math.sin(1.7 * x + y + c) * (1 + scattered(x + 999 * y + 1e6 * c)),
+  // Values near zero: signs and exponents change all the time, and in the same way from line to line.
+  crossings: (x, y, c) => Math.sin(0.9 * x + 0.03 * y + c) * (1 + 0.05 * scattered(x + 999 * y)),
   noise: (x, y, c) => 4 * scattered(x + 999 * y + 1e6 * c) - 2,
   zero: () => 0,
   sparse: (x, y) => (scattered((x >> 3) + 99 * (y >> 2)) < 0.9 ? 0 : scattered(x + 999 * y)),
@@ -118,6 +121,31 @@ describeKernel('code', 'OpenEXR blocks', () => {
       at += 8 + data.length;
     }
     expect(file.length).toBe(at);
+  });
+
+  it('are one block of DEFLATE where small, else one for the low bytes and one for the high', () => {
+    const deflated = (width: number): number[] => {
+      const planes = planesOf('half', 1, width, 16, VALUES.waves);
+      const [{ data }] = blocksOf(exrByKernel(HEAD, planes, width, 16), 16);
+      return readDeflateStream(data).blocks.map(({ bytes }) => bytes);
+    };
+    expect(deflated(64)).toEqual([2048]);
+    expect(deflated(200)).toEqual([3200, 3200]);
+  });
+
+  it('are searched for repeats while that pays', () => {
+    const farMatches = (name: string): number[] => {
+      const planes = planesOf('half', 3, 256, 128, VALUES[name]);
+      return blocksOf(exrByKernel(HEAD, planes, 256, 128), 128).map(({ data }) => {
+        const high = readDeflateStream(data).blocks.at(-1);
+        return (high?.distanceCounts ?? []).slice(1).reduce((sum, count) => sum + count, 0);
+      });
+    };
+    const searched = farMatches('crossings');
+    expect(Math.min(...searched)).toBeGreaterThan(100);
+    // The first block tells that it does not pay.
+    const [, ...later] = farMatches('noise');
+    expect(later).toEqual(later.map(() => 0));
   });
 
   // Waves take no search; ripples, whose high bytes are dear, do. The other coder is zlib without a search.
