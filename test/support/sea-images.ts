@@ -2,7 +2,8 @@ import { float32Engine } from '../../src/field/float32-engine.ts';
 import type { FieldName } from '../../src/field/frame-fields.ts';
 import type { ChannelSpec, Image, Quantity, SampleType } from '../../src/image/image.ts';
 import { sampledMaps } from '../../src/maps/sampled-map.ts';
-import { randomWaves } from './random-waves.ts';
+import { planBake } from '../../src/plan/plan-bake.ts';
+import { tinySea } from './tiny-seas.ts';
 
 /*
  * Images of a sea as a bake makes them, for benches of the encoders and tests of their sizes.
@@ -22,9 +23,20 @@ const FIELDS: ReadonlySet<FieldName> = new Set<FieldName>([
 /** Share of texels with foam. */
 const FOAM_SHARE = 0.05;
 
-/** Images by what they hold: displacement in 16 bits, half and float, normals in 8 bits, foam in 8 bits. */
+/**
+ * Images by what they hold: displacement in 16 bits, half and float, normals in 8 bits, foam in 8 bits; of a wind of
+ * 12 m/s, on the tile of a second cascade: 53 m, with waves from 6 m down to four texels.
+ */
 export function seaImages(N: number): Readonly<Record<string, Image>> {
-  const waves = randomWaves({ resolution: N });
+  const sea = tinySea({
+    systems: [{ kind: 'wind-sea', from: 250, windSpeed: 12, fetch: 100_000 }],
+    loop: { frames: 192, frameRate: 24 },
+    cascades: [
+      { patch: 250, resolution: N },
+      { patch: 53, resolution: N },
+    ],
+  });
+  const waves = planBake(sea).waves[1].amplitudes;
   const surface = float32Engine().synthesis(waves, { depthM: Infinity, horizontalScale: 1, fields: FIELDS });
   surface.turnTo(0);
   const [rough] = images(N, ['height'], 'float', { scale: 1, offset: 0 });
