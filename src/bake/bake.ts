@@ -161,8 +161,8 @@ async function begin(
   const missing = wanted.filter((id) => !crew.finished.has('frame', id));
   requireEngine(crew.plan.engine);
   requireResources(crew.plan, root, Math.max(1, threads), missing);
-  if (foreign !== null) removeBake(root, foreign);
-  claimFolder(root, crew.plan);
+  if (foreign !== null) removeBake(root, foreign, crew.alone());
+  claimFolder(root, crew.plan, crew.alone());
   crew.begin(task);
   tally.phase('start');
 }

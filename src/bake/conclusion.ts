@@ -1,6 +1,7 @@
 import { StoppedError } from '../errors.ts';
 import type { Manifest } from '../manifest/manifest.ts';
 import { writeFileAtomic } from '../store/atomic-file.ts';
+import { isIdleAt } from './crew.ts';
 import { BAKE_DEFAULTS, type BakeResult, type RunOptions } from './options.ts';
 import { RUN_PATH } from './paths.ts';
 import type { RunTally } from './run-report.ts';
@@ -57,6 +58,7 @@ export function concluded(
   const manifest = made ?? finishedElsewhere(root, planHash);
   const run = tally.report(planHash, threads);
   if (made !== null && tally.made()) writeFileAtomic(root, RUN_PATH, `${JSON.stringify(run, null, 2)}\n`);
-  if (manifest !== null && !(options.keepScratch ?? BAKE_DEFAULTS.keepScratch)) clearWorkFolder(root);
+  if (manifest !== null && !(options.keepScratch ?? BAKE_DEFAULTS.keepScratch))
+    clearWorkFolder(root, isIdleAt(root));
   return { folder: root, manifest: made, run };
 }

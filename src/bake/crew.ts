@@ -23,6 +23,8 @@ export interface Crew {
   readonly finished: FinishedWork;
   readonly signal: AbortSignal | null;
   readonly report: (stage: BakeStage, done: number, total: number) => void;
+  /** Whether no other run of this process is at work on the folder. */
+  readonly alone: () => boolean;
   /** Writes a finished frame down. */
   readonly keep: (result: FrameResult) => void;
   /** Writes down that work begins: nothing is written into the folder before. */
@@ -39,6 +41,20 @@ export interface CrewStart {
   readonly threads: number;
   readonly options: RunOptions;
   readonly tally: RunTally;
+}
+
+/** Runs of this process by the folder they are at work on. A farm runs one; a program with the library may run more. */
+const runsAt = new Map<string, number>();
+
+/** Whether no run of this process is at work on a folder. */
+export function isIdleAt(folder: string): boolean {
+  return !runsAt.has(folder);
+}
+
+function countRun(folder: string, by: 1 | -1): void {
+  const runs = (runsAt.get(folder) ?? 0) + by;
+  if (runs === 0) runsAt.delete(folder);
+  else runsAt.set(folder, runs);
 }
 
 /**
@@ -58,6 +74,7 @@ export async function withCrew<T>(start: CrewStart, work: (crew: Crew) => Promis
     executor,
     finished: finishedWork(),
     signal,
+    alone: () => runsAt.get(folder) === 1,
     report: (stage, done, total) => options.onProgress?.({ stage, done, total }),
     keep(result) {
       const { seconds: _seconds, ...entry } = result;
@@ -77,6 +94,7 @@ export async function withCrew<T>(start: CrewStart, work: (crew: Crew) => Promis
   const stop = (): void => executor.stop();
   signal?.addEventListener('abort', stop);
   if (signal?.aborted === true) stop();
+  countRun(folder, 1);
   try {
     throwIfStopped(signal);
     const value = await work(crew);
@@ -88,9 +106,10 @@ export async function withCrew<T>(start: CrewStart, work: (crew: Crew) => Promis
     await executor.close();
     tidyUp(() => end(error instanceof StoppedError ? 'stopped' : 'failed'));
     tidyUp(journal.close);
-    if (begun) tidyUp(() => removeOwnTemporaries(folder));
+    if (begun && crew.alone()) tidyUp(() => removeOwnTemporaries(folder));
     throw error;
   } finally {
+    countRun(folder, -1);
     signal?.removeEventListener('abort', stop);
   }
 }

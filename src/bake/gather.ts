@@ -60,7 +60,7 @@ async function gathered(
   const missing = missingFrames(plan, finished);
   if (missing.length > 0) throw missingFramesError(plan, root, missing);
   tally.reuse(finished.entries().filter(({ kind }) => kind === 'frame').length);
-  claimFolder(root, plan);
+  claimFolder(root, plan, crew.alone());
   crew.begin(part === null ? 'gather' : `gather part ${part.index}/${part.count}`);
   tally.phase('start');
   if (part === null) return finishBake(crew, told.levels, tally);

@@ -86,8 +86,14 @@ export function threadExecutor(context: JobContext, threads: number): Executor {
     const pending = queue.shift();
     if (pending === undefined) return;
     lane.busy = pending;
-    lane.worker ??= newWorker(lane);
-    lane.worker.postMessage(pending.job);
+    try {
+      lane.worker ??= newWorker(lane);
+      lane.worker.postMessage(pending.job);
+    } catch (error) {
+      // The system may have no further thread to give.
+      lane.busy = null;
+      pending.reject(jobError(pending.job, context.plan, jobFailure(error)));
+    }
   }
 
   async function end(lane: Lane): Promise<void> {

@@ -85,9 +85,10 @@ export function refuseForeign(folder: string, { title }: Owner): never {
  * Makes a folder this plan's: its plan is in it, its folders are there, and nothing that killed processes left half
  * written. Of several processes with different plans one succeeds.
  *
+ * @param idleHere whether this process writes nothing there yet
  * @throws CannotCreateError (73) where another plan has been faster
  */
-export function claimFolder(folder: string, plan: Plan): void {
+export function claimFolder(folder: string, plan: Plan, idleHere: boolean): void {
   const text = planText(plan);
   if (!writeFileOnce(folder, PLAN_PATH, text)) {
     const owner = ownerOf(folder);
@@ -96,7 +97,7 @@ export function claimFolder(folder: string, plan: Plan): void {
     if (fileText(folder, PLAN_PATH, LARGEST_PLAN_BYTES) !== text) writeFileAtomic(folder, PLAN_PATH, text);
   }
   makeFolders(folder, [WORK_FOLDER, ...plan.cascades.map(({ id }) => id)]);
-  removeStaleTemporaries(folder);
+  removeStaleTemporaries(folder, idleHere);
 }
 
 /** What the journals of a folder tell of its bake. */
@@ -105,7 +106,7 @@ export function journalsIn(folder: string): readonly JournalContents<JournalLine
 }
 
 /** Removes another plan's bake: what its manifest or its journals name, and nothing else. */
-export function removeBake(folder: string, { manifest }: Owner): void {
+export function removeBake(folder: string, { manifest }: Owner, idleHere: boolean): void {
   const journalled = journalsIn(folder)
     .flatMap(({ entries }) => entries)
     .flatMap((line) => ('files' in line ? line.files : []));
@@ -113,15 +114,15 @@ export function removeBake(folder: string, { manifest }: Owner): void {
   // The manifest goes last: as long as it is there, it can be done again.
   removeFiles(folder, named);
   removeFiles(folder, [MANIFEST_PATH, RUN_PATH]);
-  clearWorkFolder(folder);
+  clearWorkFolder(folder, idleHere);
 }
 
 /**
  * Removes everything that only an unfinished bake needs, and what killed processes left half written; a file that is
  * not ours stays. The plan goes last: as long as it is there, the folder has its owner.
  */
-export function clearWorkFolder(folder: string): void {
-  removeStaleTemporaries(folder);
+export function clearWorkFolder(folder: string, idleHere: boolean): void {
+  removeStaleTemporaries(folder, idleHere);
   const paths = filesIn(`${folder}/${WORK_FOLDER}`).map((path) => `${WORK_FOLDER}/${path}`);
   removeFiles(
     folder,

@@ -11,19 +11,20 @@ const STALE_MS = 3_600_000;
 
 /**
  * Removes what killed processes left half written in a bake folder: at once where the process ran on this host and is
- * gone; after an hour without change where it ran elsewhere, or where its number is in use again. Only for when this
- * process writes nothing there: what bears its own number is then of an earlier process, as in a container, where
- * everyone is number 1.
+ * gone; after an hour without change where it ran elsewhere, or where its number is in use again.
+ * @param idleHere whether this process writes nothing there: what bears its own number is then of an earlier process, as
+ *   in a container, where everyone is number 1
  * @returns the removed paths, relative to the folder
  * @throws ReadWriteError, CannotCreateError
  */
-export function removeStaleTemporaries(folder: string): string[] {
+export function removeStaleTemporaries(folder: string, idleHere: boolean): string[] {
   const temporaries = temporariesIn(folder);
   if (temporaries.length === 0) return [];
   const now = fileClockMs(folder);
   const removed: string[] = [];
   for (const { relativePath, owner } of temporaries) {
-    const dead = owner.host === HOST && (owner.pid === process.pid || !isAlive(owner.pid));
+    const gone = owner.pid === process.pid ? idleHere : !isAlive(owner.pid);
+    const dead = owner.host === HOST && gone;
     // Its writer, or another process that cleans, may finish with it at any moment.
     const changed = fileStatus(folder, relativePath)?.mtimeMs;
     if (changed === undefined || (!dead && now - changed < STALE_MS)) continue;

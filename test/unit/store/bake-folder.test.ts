@@ -191,7 +191,7 @@ describe('removeStaleTemporaries', () => {
       const kept = [`c0/${named(here, parentProcessId)}`, named('elsewhere', dead), '.loopswell~x.tmp'];
       const others = filesIn(folder).filter((path) => !path.includes('~'));
 
-      const removed = removeStaleTemporaries(folder);
+      const removed = removeStaleTemporaries(folder, true);
       expect(removed.sort()).toEqual(
         [
           `c0/${named(here, dead)}`,
@@ -201,14 +201,19 @@ describe('removeStaleTemporaries', () => {
         ].sort(),
       );
       expect(filesIn(folder)).toEqual([...others, ...kept].sort());
-      expect(removeStaleTemporaries(folder)).toEqual([]);
+      expect(removeStaleTemporaries(folder, true)).toEqual([]);
+
+      // While it writes there itself, its own are not touched.
+      put(folder, `c0/${named(here, process.pid)}`, 0);
+      expect(removeStaleTemporaries(folder, false)).toEqual([]);
+      expect(removeStaleTemporaries(folder, true)).toHaveLength(1);
     });
   });
 
   it('does nothing to a folder without any, or to none', () => {
     withFiles((folder) => {
-      expect(removeStaleTemporaries(folder)).toEqual([]);
-      expect(removeStaleTemporaries(join(folder, 'none'))).toEqual([]);
+      expect(removeStaleTemporaries(folder, true)).toEqual([]);
+      expect(removeStaleTemporaries(join(folder, 'none'), true)).toEqual([]);
       expect(existsSync(join(folder, 'none'))).toBe(false);
     });
   });
