@@ -1,4 +1,5 @@
 import type { Plane } from '../image/image.ts';
+import { copyOf } from './bytes.ts';
 import { availableKernel, rowBytesOf } from './coder.ts';
 import { LINES_PER_BLOCK, ZIP_COMPRESSION } from './exr-header.ts';
 
@@ -59,5 +60,5 @@ export function exrByKernel(
     numbers.setBigUint64(table + OFFSET_BYTES * b, BigInt(block - memory.file), true);
     block = pixels + length;
   }
-  return bytes.slice(memory.file, block);
+  return copyOf(bytes.subarray(memory.file, block));
 }

@@ -1,6 +1,7 @@
 import { crc32 } from 'node:zlib';
 import type { Plane } from '../image/image.ts';
 import type { CodeKernel, ImageMemory } from '../kernel/code/code-kernel.ts';
+import { copyOf } from './bytes.ts';
 import { availableKernel, rowBytesOf } from './coder.ts';
 import { chunk } from './png-chunks.ts';
 
@@ -72,7 +73,7 @@ export function pngByKernel(
   bytes.set(IDAT, pixels - IDAT.length);
   numbers.setUint32(pixelsEnd, crc32(bytes.subarray(pixels - IDAT.length, pixelsEnd)));
   bytes.set(END, pixelsEnd + CHECKSUM_BYTES);
-  return bytes.slice(memory.file, pixelsEnd + CHECKSUM_BYTES + END.length);
+  return copyOf(bytes.subarray(memory.file, pixelsEnd + CHECKSUM_BYTES + END.length));
 }
 
 /** Shows the kernel some groups of rows, each with the row above it, or all rows where there are few. */
